@@ -1,0 +1,115 @@
+import { z } from "zod";
+import { biasSchema, distortionSchema, swingSchema } from "./bias";
+import { briefSchema } from "./brief";
+import { cautionSchema } from "./caution";
+import { partSchema } from "./part";
+
+export const OBJECTIVES = ["centred"] as const;
+export const DISTINCTS = ["part", "none"] as const;
+
+export const fitsRequestSchema = z.strictObject({
+  brief: briefSchema,
+  objective: z
+    .enum(OBJECTIVES, { error: 'Rank by "centred"' })
+    .default("centred"),
+  distinct: z.enum(DISTINCTS, { error: 'Distinct is "part" or "none"' }).default("part"),
+  limit: z.int().min(1, "At least one").max(5000, "At most 5,000").default(100),
+});
+
+/** Why a part has no fit: the filter or rating that bars it, or the furthest condition any of its combinations reached. */
+export const PASSED_OVER_REASONS = [
+  "polarity",
+  "part-filter",
+  "stock",
+  "unit-price",
+  "depletion-mode",
+  "rail-rating",
+  "saturation",
+  "swing",
+  "supply-current",
+  "source-drop",
+  "power-rating",
+  "resistor-rating",
+  "gain",
+  "resistor-values",
+  "input-resistance",
+  "high-corner",
+  "distortion",
+] as const;
+
+export const fitPartSchema = partSchema
+  .pick({
+    id: true,
+    partNumber: true,
+    maker: true,
+    polarity: true,
+    package: true,
+    mounting: true,
+    lifecycle: true,
+    stock: true,
+  })
+  .extend({
+    /** Integer cents for one piece at the brief's build quantity; null when the part has no price. */
+    unitPrice: z.int().nullable(),
+  });
+
+export const fitSchema = z.object({
+  part: fitPartSchema,
+  r1: z.number(),
+  r2: z.number(),
+  rd: z.number(),
+  rs: z.number(),
+  bias: biasSchema,
+  /** Supply current of the whole stage, drain and divider, in amperes. */
+  supplyCurrent: z.number(),
+  /** −3 dB high corner in hertz; null where nothing limits it. */
+  highCorner: z.number().nullable(),
+  /** At the brief's output peak; null when the brief states none. */
+  distortion: distortionSchema.nullable(),
+  /** The least swing of any build inside the spread; null until the box has been searched. */
+  assured: swingSchema.nullable(),
+  /** Integer cents for the five parts at the build quantity; null until priced. */
+  cost: z.int().nullable(),
+  cautions: z.array(cautionSchema),
+});
+
+/** The condition that, alone relaxed, lets the most parts in. */
+export const relaxationSchema = z.object({
+  condition: z.enum(PASSED_OVER_REASONS),
+  /** The brief's field, as a dotted path. */
+  path: z.string(),
+  /** How many parts have a fit once the condition is dropped. */
+  parts: z.int(),
+  /** The limit as stated, and the nearest one that gives a fit; null for a condition that isn't a number. */
+  stated: z.number().nullable(),
+  needed: z.number().nullable(),
+  message: z.string(),
+});
+
+export const fitsResponseSchema = z.object({
+  fits: z.array(fitSchema),
+  /** Part × resistor combinations that the answer speaks for. */
+  considered: z.number(),
+  /** Parts that have at least one fit. */
+  partsThatFit: z.int(),
+  complete: z.boolean(),
+  /** With `complete: false`: the least centring error that an unsearched combination could still have. */
+  remainingBound: z.number().optional(),
+  passedOver: z.array(z.object({ reason: z.enum(PASSED_OVER_REASONS), parts: z.int(), message: z.string() })),
+  relax: relaxationSchema.nullable(),
+  elapsedMs: z.number(),
+});
+
+/** One line of the streamed answer (`Accept: application/x-ndjson`): progress lines, then the result. */
+export const fitsEventSchema = z.union([
+  z.object({ progress: z.object({ partsDone: z.int(), partsTotal: z.int() }) }),
+  z.object({ result: fitsResponseSchema }),
+]);
+
+export type FitsRequest = z.infer<typeof fitsRequestSchema>;
+export type Fit = z.infer<typeof fitSchema>;
+export type FitPart = z.infer<typeof fitPartSchema>;
+export type FitsResponse = z.infer<typeof fitsResponseSchema>;
+export type FitsEvent = z.infer<typeof fitsEventSchema>;
+export type PassedOverReason = (typeof PASSED_OVER_REASONS)[number];
+export type Relaxation = z.infer<typeof relaxationSchema>;
