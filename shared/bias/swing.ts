@@ -1,0 +1,58 @@
+import type { Swing } from "#shared/schemas/bias";
+import type { SquareLaw } from "./device";
+
+/** A point in the output plane: drain current in amperes, drain-source voltage in volts. */
+export type OutputPoint = { id: number; vds: number };
+
+/** Two resistances in parallel, ohms; null is an open circuit. */
+export function parallel(a: number, b: number | null): number {
+  return b === null ? a : (a * b) / (a + b);
+}
+
+/**
+ * The transition point: where the a.c. line through the Q-point meets the edge of saturation, vDS = vGS - VT, that is
+ * K v² (1 + λ v) = ID + (VDS - v)/rS. The left side rises and the right side falls with v, so there is one root;
+ * the difference is convex, so Newton's method started at the Q-point (never left of the root) comes down on it
+ * without overshooting.
+ *
+ * @param q the Q-point, in saturation
+ * @param slope the a.c. line's slope resistance rS, ohms, above zero
+ */
+export function transitionPoint(device: SquareLaw, q: OutputPoint, slope: number): OutputPoint {
+  const { k, lambda } = device;
+  const intercept = q.id + q.vds / slope;
+  let v: number;
+  if (lambda === 0) {
+    const b = 1 / slope;
+    v = (2 * intercept) / (b + Math.sqrt(b * b + 4 * k * intercept));
+  } else {
+    v = q.vds;
+    for (let step = 0; step < 100; step++) {
+      const error = k * v * v * (1 + lambda * v) + v / slope - intercept;
+      const next = v - error / (k * v * (2 + 3 * lambda * v) + 1 / slope);
+      // The descent is monotone until rounding stops it.
+      if (!(next < v)) break;
+      v = next;
+    }
+  }
+  return { id: k * v * v * (1 + lambda * v), vds: v };
+}
+
+/**
+ * The room each way from the Q-point, as peak volts at the output.
+ *
+ * @param q the Q-point's drain current, A
+ * @param transition the transition point's drain current, A
+ * @param load the a.c. load rL at the output, ohms
+ */
+export function swingOf(q: number, transition: number, load: number): Swing {
+  const towardCutoff = q * load;
+  const towardOhmic = (transition - q) * load;
+  return { towardCutoff, towardOhmic, symmetric: Math.min(towardCutoff, towardOhmic) };
+}
+
+/** How far off centre a Q-point is: |U - D|/(U + D), 0 at dead centre, 1 at an edge. */
+export function centringErrorOf(swing: Swing): number {
+  const { towardCutoff, towardOhmic } = swing;
+  return Math.abs(towardCutoff - towardOhmic) / (towardCutoff + towardOhmic);
+}

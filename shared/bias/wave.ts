@@ -1,0 +1,103 @@
+import type { Distortion } from "#shared/schemas/bias";
+import { drainCurrent, type SquareLaw } from "./device";
+import { findRoot } from "./find-root";
+import type { OutputPoint } from "./swing";
+
+/** What a signal meets at the Q-point: the device, where it sits, and the a.c. resistances around it. */
+export type SignalPath = {
+  device: SquareLaw;
+  q: OutputPoint & { vgs: number };
+  /** The a.c. load at the output, ohms. */
+  load: number;
+  /** The part of the source resistor that carries signal, ohms; 0 where bypassed. */
+  degeneration: number;
+};
+
+/**
+ * Drain current at one instant of the input, on the a.c. line through the Q-point, with the whole device law:
+ * cutoff and the ohmic region clip the wave as they would.
+ *
+ * @param input instantaneous gate voltage above its quiescent value, V
+ * @returns amperes
+ */
+export function instantaneousCurrent(path: SignalPath, input: number): number {
+  const { device, q, load, degeneration } = path;
+  const slope = load + degeneration;
+  const drive = q.vgs + input;
+  // At zero current the device sees its largest VGS and VDS: if it is off there, it is off.
+  if (drive + q.id * degeneration <= device.vt) return 0;
+  const balance = (current: number) => {
+    const change = current - q.id;
+    return drainCurrent(device, drive - change * degeneration, q.vds - change * slope) - current;
+  };
+  // Where the a.c. line reaches VDS = 0 the device carries nothing, so the root lies below.
+  return findRoot(balance, 0, q.id + q.vds / slope);
+}
+
+/** Samples a period; even harmonics of a static curve need only the rising half, mirrored. */
+const HALF_PERIOD_STEPS = 128;
+
+/**
+ * Harmonics of the output for a sine at the gate: the wave solved point by point along the a.c. line, and its
+ * Fourier coefficients. The curve has no memory, so v(θ) depends on sin θ alone and half a period holds it all;
+ * equal steps in θ make the sums exact for every harmonic below the sample count.
+ *
+ * @param inputPeak V, above zero
+ * @returns second and third harmonic over the fundamental, the largest excursion of the output in volts, and
+ * whether the wave reaches cutoff or the ohmic region
+ */
+export function distortionAt(path: SignalPath, inputPeak: number): Distortion {
+  let fundamental = 0;
+  let second = 0;
+  let third = 0;
+  let outputPeak = 0;
+  let clipped = false;
+  for (let step = 0; step <= HALF_PERIOD_STEPS; step++) {
+    const theta = Math.PI * (step / HALF_PERIOD_STEPS - 0.5);
+    const weight = step === 0 || step === HALF_PERIOD_STEPS ? 0.5 : 1;
+    const sine = Math.sin(theta);
+    const current = instantaneousCurrent(path, inputPeak * sine);
+    const output = (current - path.q.id) * path.load;
+    fundamental += weight * output * sine;
+    second += weight * output * Math.cos(2 * theta);
+    third += weight * output * Math.sin(3 * theta);
+    outputPeak = Math.max(outputPeak, Math.abs(output));
+    if (step === 0 || step === HALF_PERIOD_STEPS) clipped ||= isClipped(path, inputPeak * sine, current);
+  }
+  return {
+    secondHarmonic: Math.abs(second / fundamental),
+    thirdHarmonic: Math.abs(third / fundamental),
+    outputPeak,
+    clipped,
+  };
+}
+
+function isClipped(path: SignalPath, input: number, current: number): boolean {
+  if (current === 0) return true;
+  const change = current - path.q.id;
+  const overdrive = path.q.vgs + input - change * path.degeneration - path.device.vt;
+  return path.q.vds - change * (path.load + path.degeneration) < overdrive;
+}
+
+/**
+ * The largest output peak whose second harmonic stays within a limit; the clipping limit when distortion never
+ * reaches it. The harmonic may dip before it rises (channel-length modulation cancels it near δ = 1/3), so the
+ * first crossing is looked for in steps and then closed in on.
+ *
+ * @param limit second harmonic over fundamental, 0 to 1
+ * @param gain magnitude of the small-signal gain
+ * @param symmetric the symmetric swing, V peak
+ * @returns volts peak at the output
+ */
+export function linearSwing(path: SignalPath, limit: number, gain: number, symmetric: number): number {
+  const excess = (outputPeak: number) => distortionAt(path, outputPeak / gain).secondHarmonic - limit;
+  const steps = 24;
+  let previous = symmetric / 1000;
+  if (excess(previous) > 0) return 0;
+  for (let step = 1; step <= steps; step++) {
+    const peak = (symmetric * step) / steps;
+    if (excess(peak) > 0) return findRoot(excess, previous, peak);
+    previous = peak;
+  }
+  return symmetric;
+}
