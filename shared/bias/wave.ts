@@ -1,6 +1,7 @@
 import type { Distortion } from "#shared/schemas/bias";
 import { drainCurrent, type SquareLaw } from "./device";
 import { findRoot } from "./find-root";
+import { saturationCurrent, saturationOverdrive } from "./saturation";
 import type { OutputPoint } from "./swing";
 
 /** What a signal meets at the Q-point: the device, where it sits, and the a.c. resistances around it. */
@@ -24,14 +25,19 @@ export function instantaneousCurrent(path: SignalPath, input: number): number {
   const { device, q, load, degeneration } = path;
   const slope = load + degeneration;
   const drive = q.vgs + input;
-  // At zero current the device sees its largest VGS and VDS: if it is off there, it is off.
-  if (drive + q.id * degeneration <= device.vt) return 0;
+  // Along the a.c. line the device sees a rail of VDS + ID rS: the d.c. problem again, with other numbers.
+  const rail = q.vds + q.id * slope;
+  const overdrive = drive + q.id * degeneration - device.vt;
+  if (overdrive <= 0) return 0;
+  const x = saturationOverdrive(device, rail, overdrive, degeneration, slope);
+  const saturated = saturationCurrent(device, rail, x, slope);
+  if (rail - saturated * slope >= x) return saturated;
   const balance = (current: number) => {
     const change = current - q.id;
     return drainCurrent(device, drive - change * degeneration, q.vds - change * slope) - current;
   };
   // Where the a.c. line reaches VDS = 0 the device carries nothing, so the root lies below.
-  return findRoot(balance, 0, q.id + q.vds / slope);
+  return findRoot(balance, 0, rail / slope);
 }
 
 /** Samples a period; even harmonics of a static curve need only the rising half, mirrored. */

@@ -1,0 +1,47 @@
+import { availableParallelism } from "node:os";
+import { Piscina } from "piscina";
+import type { RankingOutcome, RankingTask } from "./worker";
+
+/** Threads that search, one a core. */
+export const THREADS = availableParallelism();
+
+// Built, everything sits in one file beside ranking/; from source, the worker is a sibling that needs a loader.
+const fromSource = import.meta.url.endsWith(".ts");
+
+let pool: Piscina<RankingTask, RankingOutcome> | null = null;
+
+function threads(): Piscina<RankingTask, RankingOutcome> {
+  pool ??= new Piscina({
+    filename: new URL(fromSource ? "./worker.ts" : "./ranking/worker.js", import.meta.url).href,
+    minThreads: THREADS,
+    maxThreads: THREADS,
+    ...(fromSource ? { execArgv: ["--import", "tsx"] } : {}),
+  });
+  return pool;
+}
+
+/**
+ * Runs tasks on the pool, as many at a time as there are threads: further searches that come meanwhile get every
+ * other turn, instead of waiting behind all of this one.
+ *
+ * @param onDone called after each task with its outcome
+ */
+export async function runTasks(
+  tasks: readonly RankingTask[],
+  onDone: (outcome: RankingOutcome, task: RankingTask) => void,
+): Promise<void> {
+  let next = 0;
+  const lane = async () => {
+    while (next < tasks.length) {
+      const task = tasks[next++];
+      onDone(await threads().run(task), task);
+    }
+  };
+  await Promise.all(Array.from({ length: THREADS }, lane));
+}
+
+/** Ends the threads; the next search starts new ones. */
+export async function closePool(): Promise<void> {
+  await pool?.destroy();
+  pool = null;
+}
