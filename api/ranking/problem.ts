@@ -1,3 +1,4 @@
+import { distortionPeak } from "#shared/bias/stage-sheet";
 import type { Brief } from "#shared/schemas/brief";
 import { valuesBetween } from "#shared/values/e-series";
 
@@ -64,11 +65,6 @@ export function compileProblem(brief: Brief, supply: ResistorSupply): Problem {
     deratingPower: brief.derating.power,
     resistorPower: brief.derating.resistorPower * supply.rating,
   };
-}
-
-/** The output peak at which a brief's distortion is judged, V: as stated, else the brief's swing; 0 for none. */
-export function distortionPeak(brief: Brief): number {
-  return brief.distortion.atPeak ?? brief.swing.peak;
 }
 
 /** How many resistor sets one part can be combined with. */

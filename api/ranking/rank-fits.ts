@@ -1,0 +1,76 @@
+import { describeStage } from "#shared/bias/stage-sheet";
+import { cautionsFor } from "#shared/cautions";
+import type { Brief } from "#shared/schemas/brief";
+import type { Fit, FitsRequest, FitsResponse } from "#shared/schemas/fits";
+import type { Part } from "#shared/schemas/part";
+import { unitPriceAt } from "./filters";
+import type { ResistorSupply } from "./problem";
+import { type RankingControl, rankParts } from "./rank-parts";
+import { describePassedOver } from "./reasons";
+import { findRelaxation } from "./relax";
+import type { Candidate } from "./search/order";
+
+/** How long a search may take unless told otherwise, ms. */
+const TIME_LIMIT_MS = 60_000;
+
+/**
+ * Answers a request for fits: the exact ranking, dressed with every fit's figures and cautions; where nothing fits,
+ * what to relax.
+ *
+ * @param parts the parts the team may use
+ * @param supply what resistors can be bought
+ * @throws the signal's reason when called off
+ */
+export async function rankFits(
+  request: FitsRequest,
+  parts: readonly Part[],
+  supply: ResistorSupply,
+  control: Partial<RankingControl> = {},
+): Promise<FitsResponse> {
+  const started = performance.now();
+  const timed = { ...control, deadline: control.deadline ?? Date.now() + TIME_LIMIT_MS };
+  const ranking = await rankParts(request, parts, supply, timed);
+  const relax =
+    ranking.candidates.length === 0 && ranking.complete
+      ? await findRelaxation(request.brief, parts, supply, timed)
+      : null;
+  return {
+    fits: ranking.candidates.map((candidate) =>
+      presentFit(ranking.parts[candidate.row], request.brief, candidate),
+    ),
+    considered: ranking.considered,
+    partsThatFit: ranking.partsThatFit,
+    complete: ranking.complete,
+    // A part that was not searched may still hold a fit at dead centre.
+    ...(ranking.complete ? {} : { remainingBound: 0 }),
+    passedOver: describePassedOver(ranking.passedOver, request.brief),
+    relax,
+    elapsedMs: performance.now() - started,
+  };
+}
+
+function presentFit(part: Part, brief: Brief, { r1, r2, rd, rs }: Candidate): Fit {
+  const resistors = { r1, r2, rd, rs };
+  const sheet = describeStage(part, brief, resistors);
+  return {
+    part: {
+      id: part.id,
+      partNumber: part.partNumber,
+      maker: part.maker,
+      polarity: part.polarity,
+      package: part.package,
+      mounting: part.mounting,
+      lifecycle: part.lifecycle,
+      stock: part.stock,
+      unitPrice: unitPriceAt(part, brief.buildQuantity),
+    },
+    ...resistors,
+    bias: sheet.bias,
+    supplyCurrent: sheet.supplyCurrent,
+    highCorner: sheet.highCorner,
+    distortion: sheet.distortion,
+    assured: null,
+    cost: null,
+    cautions: cautionsFor(part, brief, resistors),
+  };
+}
