@@ -1,4 +1,4 @@
-import { describeStage, type StageSheet } from "./bias/stage-sheet";
+import { figureStage, type StageFigures } from "./bias/stage-sheet";
 import type { Brief } from "./schemas/brief";
 import type { Caution, CautionCode } from "./schemas/caution";
 import type { Part } from "./schemas/part";
@@ -25,9 +25,9 @@ type Stage = {
   part: Part;
   brief: Brief;
   /** At 25 °C. */
-  nominal: StageSheet;
+  nominal: StageFigures;
   /** At the hottest ambient of the brief. */
-  hot: StageSheet;
+  hot: StageFigures;
 };
 type Rule = (stage: Stage) => string | null;
 
@@ -69,7 +69,7 @@ const RULES: Record<CautionCode, Rule> = {
     const high = 1 + brief.rail.tolerance;
     const sits = [`input capacitor ${volts(hot.nodes.gate * high)}`];
     if (brief.load.ohms !== null) sits.push(`output capacitor ${volts(brief.rail.volts * high)} at switch-on`);
-    if (hot.capacitors?.bypass) sits.push(`bypass capacitor ${volts(hot.nodes.source * high)}`);
+    if (hot.values.sourceBypassed && hot.values.rs > 0) sits.push(`bypass capacitor ${volts(hot.nodes.source * high)}`);
     return `Capacitors must stand the voltage across them: ${sits.join(", ")}. Mind the polarity of electrolytics.`;
   },
   lifecycle: ({ part }) => {
@@ -88,8 +88,8 @@ export function cautionsFor(part: Part, brief: Brief, resistors: Resistors): Cau
   const stage: Stage = {
     part,
     brief,
-    nominal: describeStage(part, brief, resistors),
-    hot: describeStage(part, brief, resistors, brief.ambient.max),
+    nominal: figureStage(part, brief, resistors),
+    hot: figureStage(part, brief, resistors, brief.ambient.max),
   };
   const cautions: Caution[] = [];
   for (const [code, rule] of Object.entries(RULES) as [CautionCode, Rule][]) {

@@ -1,4 +1,4 @@
-import { describeStage } from "#shared/bias/stage-sheet";
+import { figureSignal, figureStage } from "#shared/bias/stage-sheet";
 import { cautionsFor } from "#shared/cautions";
 import type { Brief } from "#shared/schemas/brief";
 import type { Fit, FitsRequest, FitsResponse } from "#shared/schemas/fits";
@@ -51,7 +51,7 @@ export async function rankFits(
 
 function presentFit(part: Part, brief: Brief, { r1, r2, rd, rs }: Candidate): Fit {
   const resistors = { r1, r2, rd, rs };
-  const sheet = describeStage(part, brief, resistors);
+  const figures = figureStage(part, brief, resistors);
   return {
     part: {
       id: part.id,
@@ -65,10 +65,9 @@ function presentFit(part: Part, brief: Brief, { r1, r2, rd, rs }: Candidate): Fi
       unitPrice: unitPriceAt(part, brief.buildQuantity),
     },
     ...resistors,
-    bias: sheet.bias,
-    supplyCurrent: sheet.supplyCurrent,
-    highCorner: sheet.highCorner,
-    distortion: sheet.distortion,
+    bias: figures.bias,
+    supplyCurrent: figures.supplyCurrent,
+    ...figureSignal(part, brief, figures),
     assured: null,
     cost: null,
     cautions: cautionsFor(part, brief, resistors),

@@ -8,7 +8,7 @@ import { randomParts } from "../support/build-part";
 import { type Random, seededRandom, significant } from "../support/random";
 import { type PlainBrief, tryEveryCombination } from "./plain-loop";
 
-const PROBLEMS = 36;
+const PROBLEMS = 48;
 const MOST_COMBINATIONS = 200_000;
 const RATING = 1;
 
