@@ -11,7 +11,7 @@ import {
   useDataTableModel,
 } from "./data-table-model";
 import { DataTableRowView } from "./data-table-row";
-import { useElementWidth } from "./use-element-size";
+import { useElementWidth } from "./use-element-width";
 import { useRowMovement } from "./use-row-movement";
 
 export type DataTableProps<T extends RowData> = {

@@ -1,0 +1,77 @@
+import type { ChangeEvent } from "react";
+import { classNames } from "./class-names";
+import type { SelectOption } from "./select";
+import { type QuantityTextOptions, useQuantityText } from "./use-quantity-text";
+
+const BLANK =
+  "value rounded-t-sm border-ink border-b-[1.5px] bg-panel px-2 leading-tight text-[0.85em] text-ink " +
+  "hover:bg-rule/50 aria-invalid:border-caution aria-invalid:border-dashed aria-invalid:text-caution-ink";
+
+type BlankInputProps = QuantityTextOptions & {
+  /** What the blank is, since the sentence around it is no label: "Rail". */
+  label: string;
+  /** A refusal from elsewhere (the form); its words stand under the sentence, in the element with `errorId`. */
+  error?: string | null;
+  errorId?: string;
+  /** Shown while empty. */
+  placeholder?: string;
+};
+
+/** A blank in a sentence, filled in with a quantity; as wide as what stands in it. */
+export function BlankInput({ label, error, errorId, placeholder = "", ...options }: BlankInputProps) {
+  const quantity = useQuantityText(options);
+  const invalid = Boolean(error || quantity.error);
+  const length = Math.max(2, (quantity.text || placeholder).length);
+  return (
+    <input
+      type="text"
+      autoComplete="off"
+      spellCheck={false}
+      aria-label={label}
+      aria-invalid={invalid || undefined}
+      aria-describedby={invalid ? errorId : undefined}
+      placeholder={placeholder}
+      title={quantity.error ?? undefined}
+      {...quantity.inputProps}
+      className={BLANK}
+      // Mono, so the length in characters is the width; plus the padding.
+      style={{ width: `calc(${length}ch + 1rem)` }}
+    />
+  );
+}
+
+type BlankSelectProps<T extends string> = {
+  label: string;
+  options: readonly SelectOption<T>[];
+  value: T;
+  onChange: (value: T) => void;
+  error?: string | null;
+  errorId?: string;
+};
+
+/** A blank in a sentence, filled in from a list; as wide as the choice. */
+export function BlankSelect<T extends string>(props: BlankSelectProps<T>) {
+  const { label, options, value, onChange, error, errorId } = props;
+  const chosen = options.find((option) => option.value === value);
+  const choose = (event: ChangeEvent<HTMLSelectElement>) => {
+    const option = options.find((candidate) => candidate.value === event.target.value);
+    if (option) onChange(option.value);
+  };
+  return (
+    <select
+      aria-label={label}
+      aria-invalid={error ? true : undefined}
+      aria-describedby={error ? errorId : undefined}
+      value={value}
+      onChange={choose}
+      className={classNames(BLANK, "appearance-none")}
+      style={{ width: `calc(${(chosen?.label ?? value).length}ch + 1rem)` }}
+    >
+      {options.map((option) => (
+        <option key={option.value} value={option.value} disabled={option.disabled}>
+          {option.label}
+        </option>
+      ))}
+    </select>
+  );
+}
