@@ -68,8 +68,10 @@ const RULES: Record<CautionCode, Rule> = {
   "capacitor-voltage": ({ brief, hot }) => {
     const high = 1 + brief.rail.tolerance;
     const sits = [`input capacitor ${volts(hot.nodes.gate * high)}`];
-    if (brief.load.ohms !== null) sits.push(`output capacitor ${volts(brief.rail.volts * high)} at switch-on`);
-    if (hot.values.sourceBypassed && hot.values.rs > 0) sits.push(`bypass capacitor ${volts(hot.nodes.source * high)}`);
+    if (brief.load.ohms !== null)
+      sits.push(`output capacitor ${volts(brief.rail.volts * high)} at switch-on`);
+    if (hot.values.sourceBypassed && hot.values.rs > 0)
+      sits.push(`bypass capacitor ${volts(hot.nodes.source * high)}`);
     return `Capacitors must stand the voltage across them: ${sits.join(", ")}. Mind the polarity of electrolytics.`;
   },
   lifecycle: ({ part }) => {

@@ -2,8 +2,10 @@ import type { Brief } from "#shared/schemas/brief";
 import type { FitsResponse, PassedOverReason } from "#shared/schemas/fits";
 import { PASSED_OVER_REASONS } from "#shared/schemas/fits";
 import { formatCents, formatPercent, formatQuantity } from "#shared/values/engineering";
+import type { Unit } from "#shared/values/units";
 
-const quantity = (value: number | undefined, unit: string) => formatQuantity(value ?? null, unit, { exact: true });
+const quantity = (value: number | undefined, unit: Unit) =>
+  formatQuantity(value ?? null, unit, { exact: true });
 
 /** Says in words why parts were passed over, with the brief's own figure. */
 const WORDS: Record<PassedOverReason, (brief: Brief) => string> = {

@@ -2,6 +2,7 @@ import type { Brief } from "#shared/schemas/brief";
 import type { PassedOverReason, Relaxation } from "#shared/schemas/fits";
 import type { Part } from "#shared/schemas/part";
 import { formatPercent, formatQuantity } from "#shared/values/engineering";
+import type { Unit } from "#shared/values/units";
 import type { ResistorSupply } from "./problem";
 import { type RankingControl, rankParts } from "./rank-parts";
 
@@ -10,7 +11,7 @@ type Limit = {
   condition: PassedOverReason;
   path: string;
   name: string;
-  unit: string;
+  unit: Unit;
   stated: (brief: Brief) => number | undefined;
   /** The brief with this limit at another value; undefined drops it. */
   at: (brief: Brief, value: number | undefined) => Brief;
@@ -146,7 +147,10 @@ const FILTERS: readonly Filter[] = [
     condition: "part-filter",
     path: "parts",
     isOn: ({ parts }) => Boolean(parts.packages || parts.mounting || parts.makers || parts.ids),
-    off: ({ parts: { stockedOnly, maxUnitPrice }, ...brief }) => ({ ...brief, parts: { stockedOnly, maxUnitPrice } }),
+    off: ({ parts: { stockedOnly, maxUnitPrice }, ...brief }) => ({
+      ...brief,
+      parts: { stockedOnly, maxUnitPrice },
+    }),
     message: "Allow other packages, mountings, makers and parts",
   },
   {
@@ -204,7 +208,11 @@ export async function findRelaxation(
   }
   const stated = limit?.stated(brief);
   if (!limit || stated === undefined) return null;
-  const needed = await nearestValue(limit, stated, async (value) => (await partsThatFit(limit.at(brief, value))) > 0);
+  const needed = await nearestValue(
+    limit,
+    stated,
+    async (value) => (await partsThatFit(limit.at(brief, value))) > 0,
+  );
   const show = (value: number) =>
     limit.unit === "%" ? formatPercent(value, 3) : formatQuantity(value, limit.unit, { exact: true });
   const verb = limit.easiest < stated ? "Lower" : "Raise";

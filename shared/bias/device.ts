@@ -48,7 +48,8 @@ export function conductances(device: SquareLaw, vgs: number, vds: number): { gm:
   const { k, lambda } = device;
   if (overdrive <= 0) return { gm: 0, gds: 0 };
   const modulation = 1 + lambda * vds;
-  if (vds >= overdrive) return { gm: 2 * k * overdrive * modulation, gds: k * overdrive * overdrive * lambda };
+  if (vds >= overdrive)
+    return { gm: 2 * k * overdrive * modulation, gds: k * overdrive * overdrive * lambda };
   return {
     gm: 2 * k * vds * modulation,
     gds: 2 * k * (overdrive - vds) * modulation + k * (2 * overdrive - vds) * vds * lambda,

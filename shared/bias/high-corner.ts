@@ -67,7 +67,11 @@ export function millerPoles(
  *
  * @param frequency Hz; 0 gives the mid-band value
  */
-export function transferSquared(stage: SmallSignalStage, capacitances: Capacitances, frequency: number): number {
+export function transferSquared(
+  stage: SmallSignalStage,
+  capacitances: Capacitances,
+  frequency: number,
+): number {
   const { gm, gds, load, degeneration, sourceImpedance, inputResistance } = stage;
   const omega = 2 * Math.PI * frequency;
   const bgs = omega * capacitances.cgs;

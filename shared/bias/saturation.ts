@@ -9,7 +9,13 @@ import type { SquareLaw } from "./device";
  * @param rs source resistor, ohms
  * @param rt RD + RS, ohms
  */
-export function saturationOverdrive(device: SquareLaw, vdd: number, drive: number, rs: number, rt: number): number {
+export function saturationOverdrive(
+  device: SquareLaw,
+  vdd: number,
+  drive: number,
+  rs: number,
+  rt: number,
+): number {
   const { k, lambda } = device;
   // Exact without channel-length modulation; the root of the quadratic with VGS above VT.
   const first = (2 * drive) / (1 + Math.sqrt(1 + 4 * k * rs * drive));

@@ -87,7 +87,11 @@ export function figureStage(part: Part, brief: Brief, resistors: Resistors, cels
 }
 
 /** Works out the high corner, and the distortion at the brief's output peak. */
-export function figureSignal(part: Part, brief: Brief, { device, values, bias }: StageFigures): SignalFigures {
+export function figureSignal(
+  part: Part,
+  brief: Brief,
+  { device, values, bias }: StageFigures,
+): SignalFigures {
   const gain = Math.abs(bias.gain);
   if (gain === 0) return { highCorner: null, distortion: null };
   const { load, degeneration } = acResistances(values);
@@ -104,8 +108,7 @@ export function figureSignal(part: Part, brief: Brief, { device, values, bias }:
       },
       terminalCapacitances(part),
     ),
-    distortion:
-      bias.swing && peak > 0 ? distortionAt(signalPath(device, values, bias), peak / gain) : null,
+    distortion: bias.swing && peak > 0 ? distortionAt(signalPath(device, values, bias), peak / gain) : null,
   };
 }
 

@@ -6,7 +6,10 @@ export const deviceSchema = z.strictObject({
   polarity,
   vt: z.number().min(-50, "Thresholds go from -50 V to 50 V").max(50, "Thresholds go from -50 V to 50 V"),
   k: positive("The conduction parameter").max(1e4, "The conduction parameter can't be above 10 kA/V²"),
-  lambda: notNegative("Channel-length modulation").max(1, "Channel-length modulation can't be above 1 per volt"),
+  lambda: notNegative("Channel-length modulation").max(
+    1,
+    "Channel-length modulation can't be above 1 per volt",
+  ),
 });
 
 /** The four-resistor common-source stage. */

@@ -32,7 +32,9 @@ const fraction = (what: string) =>
  * Fields left out take the defaults below, which are those of a new brief.
  */
 export const briefSchema = z.strictObject({
-  polarity: z.union([polarity, z.literal("either")], { error: 'Polarity is "n", "p" or "either"' }).default("n"),
+  polarity: z
+    .union([polarity, z.literal("either")], { error: 'Polarity is "n", "p" or "either"' })
+    .default("n"),
   rail: z.strictObject({ volts: railVolts, tolerance: tolerance.default(0.05) }),
   load: z.strictObject({ ohms: loadOhms }).default({ ohms: null }),
   source: z
@@ -40,7 +42,10 @@ export const briefSchema = z.strictObject({
     .prefault({}),
   swing: z.strictObject({ peak: notNegative("The swing").default(0) }).prefault({}),
   gain: z
-    .strictObject({ min: positive("The least gain").optional(), max: positive("The greatest gain").optional() })
+    .strictObject({
+      min: positive("The least gain").optional(),
+      max: positive("The greatest gain").optional(),
+    })
     .refine((gain) => gain.min === undefined || gain.max === undefined || gain.min <= gain.max, {
       path: ["min"],
       message: "The least gain is above the greatest",
@@ -104,14 +109,14 @@ export const briefSchema = z.strictObject({
     .default(100),
 });
 
-export const briefName = z
-  .string()
-  .trim()
-  .min(1, "Give the brief a name")
-  .max(120, "At most 120 characters");
+export const briefName = z.string().trim().min(1, "Give the brief a name").max(120, "At most 120 characters");
 
 export const createBriefSchema = z.strictObject({ name: briefName, brief: briefSchema });
-export const updateBriefSchema = z.strictObject({ name: briefName, brief: briefSchema, version: z.int().positive() });
+export const updateBriefSchema = z.strictObject({
+  name: briefName,
+  brief: briefSchema,
+  version: z.int().positive(),
+});
 
 const person = z.object({ id: z.string(), name: z.string() });
 

@@ -9,9 +9,7 @@ export const DISTINCTS = ["part", "none"] as const;
 
 export const fitsRequestSchema = z.strictObject({
   brief: briefSchema,
-  objective: z
-    .enum(OBJECTIVES, { error: 'Rank by "centred"' })
-    .default("centred"),
+  objective: z.enum(OBJECTIVES, { error: 'Rank by "centred"' }).default("centred"),
   distinct: z.enum(DISTINCTS, { error: 'Distinct is "part" or "none"' }).default("part"),
   limit: z.int().min(1, "At least one").max(5000, "At most 5,000").default(100),
 });

@@ -38,7 +38,9 @@ export const stageSchema = z.object({
   part: partSchema,
   resistors: resistorsSchema,
   brief: briefSchema,
-  origin: z.object({ briefId: z.int().positive(), briefName: z.string(), briefVersion: z.int().positive() }).nullable(),
+  origin: z
+    .object({ briefId: z.int().positive(), briefName: z.string(), briefVersion: z.int().positive() })
+    .nullable(),
   createdBy: person,
   updatedBy: person,
   createdAt: z.iso.datetime(),

@@ -40,7 +40,10 @@ function searchHere(problem: Problem, parts: readonly Part[]): number {
 
 /** The exact search against the plain loop, in one process, at three catalog sizes and three series. */
 export async function benchExactSearch(report: Report): Promise<void> {
-  const catalog = randomParts(seededRandom(2026), Math.max(...CATALOG_SIZES)).map((part) => ({ ...part, vdss: 60 }));
+  const catalog = randomParts(seededRandom(2026), Math.max(...CATALOG_SIZES)).map((part) => ({
+    ...part,
+    vdss: 60,
+  }));
   const medians = new Map<string, number>();
   for (const series of SERIES) {
     report.heading(`centred, ${series}, three decades for each resistor, 12 V, 10 kΩ`);
@@ -77,7 +80,11 @@ export async function benchExactSearch(report: Report): Promise<void> {
   const at = (key: string) => medians.get(key) ?? Number.NaN;
   report.heading("Growth");
   for (const series of SERIES) {
-    report.figure(`${series}: time at 2,000 parts over 200`, at(`${series} 2000`) / at(`${series} 200`), "times");
+    report.figure(
+      `${series}: time at 2,000 parts over 200`,
+      at(`${series} 2000`) / at(`${series} 200`),
+      "times",
+    );
   }
   report.figure("2,000 parts: time of E96 over E24", at("E96 2000") / at("E24 2000"), "times");
 }

@@ -1,5 +1,5 @@
 import { afterAll, describe, expect, it } from "vitest";
-import { briefSchema, type BriefInput } from "#shared/schemas/brief";
+import { type BriefInput, briefSchema } from "#shared/schemas/brief";
 import type { Part } from "#shared/schemas/part";
 import { valuesBetween } from "#shared/values/e-series";
 import { closePool } from "../../api/ranking/pool";
@@ -14,7 +14,8 @@ const RATING = 1;
 
 afterAll(closePool);
 
-const plainValues = (series: "E6" | "E12" | "E24", min: number, max: number) => valuesBetween(series, min, max);
+const plainValues = (series: "E6" | "E12" | "E24", min: number, max: number) =>
+  valuesBetween(series, min, max);
 
 /** A small problem: few values, any mix of conditions, loads, polarities and source resistors. */
 function drawProblem(random: Random): { input: BriefInput; parts: Part[]; combinations: number } {
@@ -28,7 +29,8 @@ function drawProblem(random: Random): { input: BriefInput; parts: Part[]; combin
     const divider = { series, min: low, max: low * random.pick([4, 10, 30]) };
     const drain = { series: random.pick(["E6", "E12"] as const), min: drainLow, max: drainLow * 10 };
     const source = { series: random.pick(["E6", "E12"] as const), min: sourceLow, max: sourceLow * 10 };
-    const maybe = <T,>(probability: number, value: () => T) => (random.chance(probability) ? value() : undefined);
+    const maybe = <T>(probability: number, value: () => T) =>
+      random.chance(probability) ? value() : undefined;
     const peak = maybe(0.6, () => significant(volts * random.between(0.02, 0.2)));
     const input: BriefInput = {
       polarity: random.pick(["n", "p", "either"] as const),
@@ -53,7 +55,8 @@ function drawProblem(random: Random): { input: BriefInput; parts: Part[]; combin
       resistors: { divider, drain, source },
       derating: { vds: 0.8, power: random.pick([0.05, 0.5, 1]), resistorPower: random.pick([0.01, 0.5]) },
     };
-    const count = (range: typeof divider | typeof drain) => valuesBetween(range.series, range.min, range.max).length;
+    const count = (range: typeof divider | typeof drain) =>
+      valuesBetween(range.series, range.min, range.max).length;
     const combinations =
       parts.length *
       count(divider) ** 2 *
@@ -101,8 +104,17 @@ describe("the ranking equals trying every combination", () => {
       const brief = briefSchema.parse(input);
       const allowed = parts.filter((part) => brief.polarity === "either" || part.polarity === brief.polarity);
       const expected = tryEveryCombination(plainBrief(input), allowed);
-      const all = await rankFits({ brief, objective: "centred", distinct: "none", limit: 5000 }, parts, supply);
-      const values = ({ r1, r2, rd, rs }: { r1: number; r2: number; rd: number; rs: number }) => [r1, r2, rd, rs];
+      const all = await rankFits(
+        { brief, objective: "centred", distinct: "none", limit: 5000 },
+        parts,
+        supply,
+      );
+      const values = ({ r1, r2, rd, rs }: { r1: number; r2: number; rd: number; rs: number }) => [
+        r1,
+        r2,
+        rd,
+        rs,
+      ];
       expect(all.considered).toBe((combinations / parts.length) * allowed.length);
       expect(all.fits.map((fit) => [fit.part.id, ...values(fit)])).toEqual(
         expected.slice(0, 5000).map((fit) => [fit.partId, ...values(fit)]),
@@ -112,7 +124,11 @@ describe("the ranking equals trying every combination", () => {
       const few = await rankFits({ brief, objective: "centred", distinct: "none", limit: 7 }, parts, supply);
       expect(few.fits).toEqual(all.fits.slice(0, 7));
 
-      const perPart = await rankFits({ brief, objective: "centred", distinct: "part", limit: 100 }, parts, supply);
+      const perPart = await rankFits(
+        { brief, objective: "centred", distinct: "part", limit: 100 },
+        parts,
+        supply,
+      );
       const firstOfEach = expected.filter(
         (fit, index) => expected.findIndex((other) => other.partId === fit.partId) === index,
       );

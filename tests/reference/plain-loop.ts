@@ -92,11 +92,8 @@ function secondHarmonic(
     const input = peak * Math.sin(angle);
     const i = halve(
       (x) =>
-        current(
-          part,
-          q.vgs + input - (x - q.id) * degeneration,
-          q.vds - (x - q.id) * (load + degeneration),
-        ) - x,
+        current(part, q.vgs + input - (x - q.id) * degeneration, q.vds - (x - q.id) * (load + degeneration)) -
+        x,
       0,
       q.id + q.vds / (load + degeneration),
     );

@@ -39,8 +39,7 @@ export function impossibleIn(
     const omega = 2 * Math.PI * problem.highCornerMin;
     const output = load / (1 + gdsHigh * load);
     const source = (problem.sourceImpedance * leastInput) / (problem.sourceImpedance + leastInput);
-    const a1 =
-      source * (device.cgs + device.cgd * (1 + gmLow * output)) + output * (device.cgd + device.cds);
+    const a1 = source * (device.cgs + device.cgd * (1 + gmLow * output)) + output * (device.cgd + device.cds);
     const zero = (omega * device.cgd) / gmLow;
     if ((a1 * omega) ** 2 > 2 * (1 + zero * zero)) return "high-corner";
   }

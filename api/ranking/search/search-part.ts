@@ -1,51 +1,36 @@
-import { permittedDissipation } from "#shared/bias/thermal";
-import { type Capacitances, highCorner, type SmallSignalStage, transferSquared } from "#shared/bias/high-corner";
 import { saturationCurrent, saturationOverdrive } from "#shared/bias/saturation";
 import { transitionVoltage } from "#shared/bias/swing";
-import { distortionAt } from "#shared/bias/wave";
-import type { PassedOverReason } from "#shared/schemas/fits";
+import { permittedDissipation } from "#shared/bias/thermal";
 import type { Catalog } from "../catalog";
 import type { Problem } from "../problem";
 import { impossibleIn } from "./bounds";
+import {
+  CONDITIONS,
+  type Condition,
+  type Device,
+  failedCondition,
+  hasPointConditions,
+  type Line,
+  type Point,
+  reachesCorner,
+} from "./conditions";
 import { type BestCandidates, bucketOf, nanovolts } from "./order";
 import { filterRatioTable, firstAtMost, type RatioTable } from "./ratio-table";
 import {
   currentAtCentring,
   currentForOhmicRoom,
-  type LineResistances,
   overdriveAt,
   type Span,
   spansWithinDissipation,
   swingBound,
 } from "./windows";
 
-/** The conditions in the order in which the search meets them. */
-const CONDITIONS = [
-  "rail-rating",
-  "swing",
-  "supply-current",
-  "source-drop",
-  "power-rating",
-  "resistor-rating",
-  "gain",
-  "resistor-values",
-  "input-resistance",
-  "high-corner",
-  "distortion",
-] as const satisfies readonly PassedOverReason[];
-
-type Condition = (typeof CONDITIONS)[number];
-const DEPTH = Object.fromEntries(CONDITIONS.map((name, depth) => [name, depth])) as Record<Condition, number>;
-
-/** Gate-voltage windows are widened by this share, so that rounding never hides a ratio; each is then tested exactly. */
+/** Windows are widened by this share, so that rounding never hides a ratio; each is then tested exactly. */
 const SLACK = 1e-9;
 /** How often a span is halved to cut away what can't meet a condition: 32 slices. */
 const HALVINGS = 5;
-
-type Line = LineResistances & { rd: number; rs: number };
-
-/** One part's figures, taken out of the columns once. */
-type Device = { vt: number; k: number; lambda: number } & Capacitances;
+/** A K in the middle of the discretes, A/V², to order the lines by before any part is known. */
+const TYPICAL_K = 5e-3;
 
 /**
  * The exact search of one brief. For a part and a pair RD, RS, room toward cutoff rises and room toward the ohmic
@@ -62,10 +47,14 @@ export class Search {
   readonly #lines: Line[][];
   readonly #pointwise: boolean;
   /** How far the part's combinations came: the furthest condition that one failed. */
-  #furthest = -1;
+  #furthest = 0;
   /** Where the last slice of the present line ended: widened slices may touch, and no ratio is to be met twice. */
   #walkedTo = 0;
 
+  /**
+   * @param problem the brief in numbers
+   * @param every the ratio table of the brief's divider values
+   */
   constructor(problem: Problem, every: RatioTable) {
     this.#problem = problem;
     this.#every = every;
@@ -78,18 +67,9 @@ export class Search {
         vg ** 2 / r2 <= resistorPower
       );
     });
-    let leastInput = Number.POSITIVE_INFINITY;
-    for (let at = 0; at < this.#table.r1.length; at++) {
-      const { r1, r2 } = this.#table;
-      leastInput = Math.min(leastInput, (r1[at] * r2[at]) / (r1[at] + r2[at]));
-    }
-    this.#leastInput = leastInput;
+    this.#leastInput = leastInputResistance(this.#table);
     this.#lines = orderedLines(problem);
-    this.#pointwise =
-      problem.gainMin > 0 ||
-      problem.gainMax < Number.POSITIVE_INFINITY ||
-      problem.highCornerMin > 0 ||
-      problem.distortionMax < Number.POSITIVE_INFINITY;
+    this.#pointwise = hasPointConditions(problem);
   }
 
   /**
@@ -102,88 +82,83 @@ export class Search {
    */
   part(catalog: Catalog, row: number, best: BestCandidates): Condition {
     const { vdd, deratingVds, deratingPower, ambientMax } = this.#problem;
-    this.#furthest = -1;
     if (vdd > deratingVds * catalog.vdss[row]) return "rail-rating";
+    this.#furthest = 0;
     const figures = { pd25: catalog.pd25[row], rthJa: catalog.rthJa[row], tjMax: catalog.tjMax[row] };
-    const power = deratingPower * permittedDissipation(figures, ambientMax);
     const device: Device = {
+      row,
       vt: catalog.vt[row],
       k: catalog.k[row],
       lambda: catalog.lambda[row],
       cgs: catalog.cgs[row],
       cgd: catalog.cgd[row],
       cds: catalog.cds[row],
+      power: deratingPower * permittedDissipation(figures, ambientMax),
     };
     const kUpper = device.k * (1 + device.lambda * vdd);
     for (const sameDrain of this.#lines) {
       for (const line of sameDrain) {
         const threshold = best.threshold;
-        if (threshold && threshold.bucket === 0) {
-          // With the least centring error in the list, only a greater swing gets in; and swing falls as RS grows.
-          if (nanovolts(swingBound(vdd, kUpper, line)) < threshold.swing) break;
-        }
-        this.#line(row, device, power, line, best);
+        // With no centring error left to beat, only a greater swing gets in; and the swing falls as RS grows.
+        if (threshold?.bucket === 0 && nanovolts(swingBound(vdd, kUpper, line)) < threshold.swing) break;
+        this.#searchLine(device, line, best);
       }
     }
-    return CONDITIONS[Math.max(this.#furthest, 0)];
+    return CONDITIONS[this.#furthest];
   }
 
   #fail(condition: Condition): void {
-    if (DEPTH[condition] > this.#furthest) this.#furthest = DEPTH[condition];
+    this.#furthest = Math.max(this.#furthest, CONDITIONS.indexOf(condition));
   }
 
   /** All dividers of one pair RD, RS. */
-  #line(row: number, device: Device, power: number, line: Line, best: BestCandidates): void {
-    const span = this.#span(device, line, best);
+  #searchLine(device: Device, line: Line, best: BestCandidates): void {
+    const span = this.#allowedSpan(device, line, best);
     if (!span) return;
     const { vdd } = this.#problem;
-    const spans = spansWithinDissipation(span, vdd, line.total, power);
-    if (spans.length === 0) return this.#fail("power-rating");
+    const spans = spansWithinDissipation(span, vdd, line.total, device.power);
+    if (spans.length === 0) this.#fail("power-rating");
     const centre = currentAtCentring(vdd, device.k, device.lambda, line, 0);
     this.#walkedTo = 0;
     for (const within of spans) {
       const slices = this.#pointwise ? this.#possibleSlices(device, line, within, HALVINGS) : [within];
-      for (const slice of slices) this.#slice(row, device, power, line, slice, centre, best);
+      for (const slice of slices) this.#walk(device, line, slice, centre, best);
     }
   }
 
-  /** The currents that the conditions which are intervals allow, and that could still enter the list. */
-  #span({ k, lambda }: Device, line: Line, best: BestCandidates): Span | null {
+  /** The currents that the conditions which are plain ranges allow, and that could still enter the list. */
+  #allowedSpan({ k, lambda }: Device, line: Line, best: BestCandidates): Span | null {
     const problem = this.#problem;
     const { vdd } = problem;
-    let low = problem.swingPeak / line.load;
-    let high = currentForOhmicRoom(vdd, k, lambda, line, problem.swingPeak);
-    if (low > high * (1 + SLACK)) return this.#none("swing");
+    const span = { low: problem.swingPeak / line.load, high: Number.POSITIVE_INFINITY };
+    const narrow = (condition: Condition | null, low: number, high: number) => {
+      span.low = Math.max(span.low, low);
+      span.high = Math.min(span.high, high);
+      if (span.low <= span.high * (1 + SLACK)) return true;
+      if (condition) this.#fail(condition);
+      return false;
+    };
     const leastDivider = vdd / (2 * problem.divider[problem.divider.length - 1]);
-    high = Math.min(high, problem.supplyCurrentMax - leastDivider);
-    if (low > high * (1 + SLACK)) return this.#none("supply-current");
-    if (problem.sourceDropMin > 0) {
-      low = Math.max(low, line.rs > 0 ? problem.sourceDropMin / line.rs : Number.POSITIVE_INFINITY);
-      if (low > high * (1 + SLACK)) return this.#none("source-drop");
-    }
-    high = Math.min(high, Math.sqrt(problem.resistorPower / Math.max(line.rd, line.rs)));
-    if (low > high * (1 + SLACK)) return this.#none("resistor-rating");
+    const leastForDrop = problem.sourceDropMin > 0 ? problem.sourceDropMin / line.rs : 0;
+    const mostForHeat = Math.sqrt(problem.resistorPower / Math.max(line.rd, line.rs));
+    const allowed =
+      narrow("swing", 0, currentForOhmicRoom(vdd, k, lambda, line, problem.swingPeak)) &&
+      narrow("supply-current", 0, problem.supplyCurrentMax - leastDivider) &&
+      narrow("source-drop", leastForDrop, Number.POSITIVE_INFINITY) &&
+      narrow("resistor-rating", 0, mostForHeat);
+    if (!allowed) return null;
     const threshold = best.threshold;
-    if (threshold) {
+    if (threshold && threshold.bucket < 99) {
       const c = (threshold.bucket + 1) / 100;
-      if (c < 1) {
-        low = Math.max(low, currentAtCentring(vdd, k, lambda, line, -c));
-        high = Math.min(high, currentAtCentring(vdd, k, lambda, line, c));
-      }
-      if (threshold.bucket === 0) {
-        const swing = (threshold.swing - 1) * 1e-9;
-        low = Math.max(low, swing / line.load);
-        high = Math.min(high, currentForOhmicRoom(vdd, k, lambda, line, swing));
-      }
-      if (low > high * (1 + SLACK)) return null;
+      const low = currentAtCentring(vdd, k, lambda, line, -c);
+      if (!narrow(null, low, currentAtCentring(vdd, k, lambda, line, c))) return null;
     }
-    // Never below a current so small that the gate sits at the threshold: the widening needs something to widen.
-    return { low: low * (1 - SLACK), high: high * (1 + SLACK) };
-  }
-
-  #none(condition: Condition): null {
-    this.#fail(condition);
-    return null;
+    if (threshold?.bucket === 0) {
+      const swing = (threshold.swing - 1) * 1e-9;
+      const high = currentForOhmicRoom(vdd, k, lambda, line, swing);
+      if (!narrow(null, swing / line.load, high)) return null;
+    }
+    return { low: span.low * (1 - SLACK), high: span.high * (1 + SLACK) };
   }
 
   /** Halves a span again and again and keeps the slices in which every condition might be met. */
@@ -207,37 +182,31 @@ export class Search {
   }
 
   /** Walks the ratios of a span outward from the centring one, on each side until the list is beaten. */
-  #slice(
-    row: number,
-    device: Device,
-    power: number,
-    line: Line,
-    span: Span,
-    centre: number,
-    best: BestCandidates,
-  ): void {
-    const { vdd } = this.#problem;
-    const { k, lambda, vt } = device;
+  #walk(device: Device, line: Line, span: Span, centre: number, best: BestCandidates): void {
+    const { vdd, inputResistanceMin } = this.#problem;
     const gateAt = (current: number) =>
-      vt + (current > 0 ? overdriveAt(vdd, k, lambda, line.total, current) : 0) + current * line.rs;
-    const from = Math.max(this.#walkedTo, this.#firstAtLeast(this.#table, gateAt(span.low) - SLACK * vdd));
-    const to = this.#firstAtLeast(this.#table, gateAt(span.high) + SLACK * vdd);
+      device.vt +
+      (current > 0 ? overdriveAt(vdd, device.k, device.lambda, line.total, current) : 0) +
+      current * line.rs;
+    const low = gateAt(span.low) - SLACK * vdd;
+    const high = gateAt(span.high) + SLACK * vdd;
+    const from = Math.max(this.#walkedTo, this.#firstAtLeast(this.#table, low));
+    const to = this.#firstAtLeast(this.#table, high);
     if (from >= to) {
-      const barred =
-        this.#firstAtLeast(this.#every, gateAt(span.low)) < this.#firstAtLeast(this.#every, gateAt(span.high));
-      if (!barred) return this.#fail("resistor-values");
-      return this.#fail(this.#problem.inputResistanceMin > 0 ? "input-resistance" : "resistor-rating");
+      const barred = this.#firstAtLeast(this.#every, low) < this.#firstAtLeast(this.#every, high);
+      if (!barred) this.#fail("resistor-values");
+      else this.#fail(inputResistanceMin > 0 ? "input-resistance" : "resistor-rating");
+      return;
     }
     this.#walkedTo = to;
     const start = Math.min(Math.max(this.#firstAtLeast(this.#table, gateAt(centre)), from), to);
-    for (let at = start; at < to && this.#ratio(row, device, power, line, at, best); at++);
-    for (let at = start - 1; at >= from && this.#ratio(row, device, power, line, at, best); at--);
+    for (let at = start; at < to && this.#tryRatio(device, line, at, best); at++);
+    for (let at = start - 1; at >= from && this.#tryRatio(device, line, at, best); at--);
   }
 
   /** Index of the first ratio whose gate voltage is not below the given one. */
   #firstAtLeast({ ratios }: RatioTable, vg: number): number {
-    if (vg <= 0) return 0;
-    return firstAtMost(ratios, this.#problem.vdd / vg - 1);
+    return vg <= 0 ? 0 : firstAtMost(ratios, this.#problem.vdd / vg - 1);
   }
 
   /**
@@ -245,11 +214,9 @@ export class Search {
    *
    * @returns whether the next ratio outward could still enter the list
    */
-  #ratio(row: number, device: Device, power: number, line: Line, at: number, best: BestCandidates): boolean {
-    const problem = this.#problem;
-    const { vdd } = problem;
-    const vg = vdd / (1 + this.#table.ratios[at]);
-    const drive = vg - device.vt;
+  #tryRatio(device: Device, line: Line, at: number, best: BestCandidates): boolean {
+    const { vdd } = this.#problem;
+    const drive = vdd / (1 + this.#table.ratios[at]) - device.vt;
     if (drive <= 0) return true;
     const x = saturationOverdrive(device, vdd, drive, line.rs, line.total);
     const id = saturationCurrent(device, vdd, x, line.total);
@@ -261,56 +228,24 @@ export class Search {
     const towardOhmic = (iT - id) * line.load;
     const bucket = bucketOf(towardCutoff, towardOhmic);
     const symmetric = Math.min(towardCutoff, towardOhmic);
-    const swing = nanovolts(symmetric);
     const threshold = best.threshold;
-    if (threshold && (bucket > threshold.bucket || (bucket === threshold.bucket && swing < threshold.swing))) {
-      return false;
+    if (threshold && bucket >= threshold.bucket) {
+      if (bucket > threshold.bucket || nanovolts(symmetric) < threshold.swing) return false;
     }
-    const failed = this.#failedCondition(device, power, line, { x, id, vds, symmetric });
-    if (failed) {
-      this.#fail(failed);
-      return true;
-    }
-    this.#pairs(row, device, line, at, { x, id, vds, bucket, swing }, best);
+    const point = { x, id, vds, symmetric };
+    const failed = failedCondition(this.#problem, device, line, point);
+    if (failed) this.#fail(failed);
+    else this.#offerPairs(device, line, at, point, bucket, best);
     return true;
   }
 
-  /** The first condition that an operating point fails, whichever pair of the ratio makes it. */
-  #failedCondition(
-    device: Device,
-    power: number,
-    line: Line,
-    point: { x: number; id: number; vds: number; symmetric: number },
-  ): Condition | null {
-    const problem = this.#problem;
-    const { x, id, vds } = point;
-    if (point.symmetric < problem.swingPeak) return "swing";
-    if (id * line.rs < problem.sourceDropMin) return "source-drop";
-    if (vds * id > power) return "power-rating";
-    if (id * id * Math.max(line.rd, line.rs) > problem.resistorPower) return "resistor-rating";
-    if (!this.#pointwise) return null;
-    const gain = gainAt(device, line, x, vds);
-    if (gain < problem.gainMin || gain > problem.gainMax) return "gain";
-    if (problem.distortionMax < Number.POSITIVE_INFINITY && problem.distortionPeak > 0) {
-      const path = {
-        device,
-        q: { id, vds, vgs: device.vt + x },
-        load: line.load,
-        degeneration: line.degeneration,
-      };
-      const { secondHarmonic } = distortionAt(path, problem.distortionPeak / gain);
-      if (!(secondHarmonic <= problem.distortionMax)) return "distortion";
-    }
-    return null;
-  }
-
   /** Offers the pairs of one ratio, the smallest divider current first. */
-  #pairs(
-    row: number,
+  #offerPairs(
     device: Device,
     line: Line,
     at: number,
-    point: { x: number; id: number; vds: number; bucket: number; swing: number },
+    point: Point,
+    bucket: number,
     best: BestCandidates,
   ): void {
     const problem = this.#problem;
@@ -318,45 +253,34 @@ export class Search {
     for (let pair = offsets[at]; pair < offsets[at + 1]; pair++) {
       const supply = point.id + problem.vdd / (r1[pair] + r2[pair]);
       // Later pairs draw more still.
-      if (supply > problem.supplyCurrentMax) return this.#fail("supply-current");
-      if (problem.highCornerMin > 0 && !this.#reachesCorner(device, line, point, r1[pair], r2[pair])) {
+      if (supply > problem.supplyCurrentMax) {
+        this.#fail("supply-current");
+        return;
+      }
+      if (!reachesCorner(problem, device, line, point, r1[pair], r2[pair])) {
         this.#fail("high-corner");
         continue;
       }
-      const { bucket, swing } = point;
-      const candidate = { bucket, swing, supply, row, r1: r1[pair], r2: r2[pair], rd: line.rd, rs: line.rs };
-      if (!best.add(candidate)) return;
+      const taken = best.add({
+        bucket,
+        swing: nanovolts(point.symmetric),
+        supply,
+        row: device.row,
+        r1: r1[pair],
+        r2: r2[pair],
+        rd: line.rd,
+        rs: line.rs,
+      });
+      if (!taken) return;
     }
-  }
-
-  #reachesCorner(
-    device: Device,
-    line: Line,
-    { x, vds }: { x: number; vds: number },
-    r1: number,
-    r2: number,
-  ): boolean {
-    const { sourceImpedance, highCornerMin } = this.#problem;
-    const stage: SmallSignalStage = {
-      gm: 2 * device.k * x * (1 + device.lambda * vds),
-      gds: device.lambda * device.k * x * x,
-      load: line.load,
-      degeneration: line.degeneration,
-      sourceImpedance,
-      inputResistance: (r1 * r2) / (r1 + r2),
-    };
-    // Cheap and necessary; the corner itself is only worked out for what passes.
-    if (2 * transferSquared(stage, device, highCornerMin) < transferSquared(stage, device, 0)) return false;
-    const corner = highCorner(stage, device);
-    return corner === null || corner >= highCornerMin;
   }
 }
 
-/** Magnitude of the gain of a saturated device; the formula of `solveFourResistor`. */
-function gainAt(device: Device, line: Line, x: number, vds: number): number {
-  const gm = 2 * device.k * x * (1 + device.lambda * vds);
-  const gds = device.k * x * x * device.lambda;
-  return (gm * line.load) / (1 + gds * line.slope + gm * line.degeneration);
+/** The least R1 || R2 of a table, ohms; Infinity when it is empty. */
+function leastInputResistance({ r1, r2 }: RatioTable): number {
+  let least = Number.POSITIVE_INFINITY;
+  for (let at = 0; at < r1.length; at++) least = Math.min(least, (r1[at] * r2[at]) / (r1[at] + r2[at]));
+  return least;
 }
 
 /**
@@ -364,15 +288,14 @@ function gainAt(device: Device, line: Line, x: number, vds: number): number {
  * depend on the threshold voltage and little on K, so one order serves all parts; it only decides how soon a good fit
  * raises the bar.
  */
-function orderedLines(problem: Problem): Line[][] {
-  const typicalK = 5e-3;
-  const lists = problem.drain.map((rd) =>
-    problem.source.map((rs): Line => {
-      const load = problem.load === null ? rd : (rd * problem.load) / (rd + problem.load);
-      const degeneration = problem.bypassed ? 0 : rs;
+function orderedLines({ vdd, load: stageLoad, drain, source, bypassed }: Problem): Line[][] {
+  const lists = drain.map((rd) =>
+    source.map((rs): Line => {
+      const load = stageLoad === null ? rd : (rd * stageLoad) / (rd + stageLoad);
+      const degeneration = bypassed ? 0 : rs;
       return { rd, rs, load, degeneration, slope: load + degeneration, total: rd + rs };
     }),
   );
-  const bound = (list: Line[]) => (list.length > 0 ? swingBound(problem.vdd, typicalK, list[0]) : 0);
+  const bound = ([first]: Line[]) => swingBound(vdd, TYPICAL_K, first);
   return lists.sort((a, b) => bound(b) - bound(a));
 }

@@ -34,8 +34,7 @@ export function solveQPoint(device: SquareLaw, stage: StageValues): QPoint {
   const vds = vdd - id * rt;
   if (vds >= x) return { region: "saturation", vg, vgs: device.vt + x, id, vds };
   // Ohmic: the device's current falls as the stage takes more, so the balance has one root below VDD/RT.
-  const balance = (current: number) =>
-    drainCurrent(device, vg - current * rs, vdd - current * rt) - current;
+  const balance = (current: number) => drainCurrent(device, vg - current * rs, vdd - current * rt) - current;
   const ohmic = findRoot(balance, 0, vdd / rt);
   const vgs = vg - ohmic * rs;
   const ohmicVds = vdd - ohmic * rt;
