@@ -1,6 +1,6 @@
 import { valuesBetween } from "#shared/values/e-series";
+import { formatRkmFarads } from "#shared/values/rkm";
 import { significant } from "./figures";
-import { marking } from "./marking";
 import { createRandom, type Random } from "./random";
 import type { CapacitorFamily, CapacitorRecord } from "./records";
 import { type PriceSteps, priceLadder } from "./supply";
@@ -254,10 +254,13 @@ function cansAt([voltageRating, least, greatest]: (typeof canVoltages)[number]):
 }
 
 function order(random: Random, { prefix, picofarads, cents, ...figures }: Item): CapacitorRecord {
+  const farads = Number(`${picofarads}e-12`);
+  // In capitals but for the m of millifarads, which would read as mega.
+  const marking = formatRkmFarads(farads).replace(/[pnu]/, (letter) => letter.toUpperCase());
   return {
     ...figures,
-    orderableNumber: `${prefix}-${marking(picofarads * 1e-12)}-${figures.voltageRating}`,
-    farads: Number(`${picofarads}e-12`),
+    orderableNumber: `${prefix}-${marking}-${figures.voltageRating}`,
+    farads,
     stock: random.chance(1 / 15) ? 0 : Math.round(random.logBetween(300, 40_000) / 10) * 10,
     leadTimeWeeks: random.whole(2, 16),
     priceBreaks: priceLadder(cents, steps).map(({ quantity, cents: each }) => ({

@@ -1,6 +1,6 @@
 import { valuesBetween } from "#shared/values/e-series";
+import { formatRkm } from "#shared/values/rkm";
 import { significant } from "./figures";
-import { marking } from "./marking";
 import { createRandom, type Random } from "./random";
 import type { ResistorFamily, ResistorRecord, ResistorSeries } from "./records";
 import { type PriceSteps, priceLadder } from "./supply";
@@ -107,7 +107,7 @@ function order(random: Random, range: Range, ohms: number, series: ResistorSerie
   const { prefix, least: _least, greatest: _greatest, cents, ...figures } = range;
   return {
     ...figures,
-    orderableNumber: `${prefix}-${marking(ohms)}-${range.tolerance === 0.01 ? "F" : "J"}`,
+    orderableNumber: `${prefix}-${formatRkm(ohms).toUpperCase()}-${range.tolerance === 0.01 ? "F" : "J"}`,
     series,
     ohms,
     stock: random.chance(1 / 15) ? 0 : Math.round(random.logBetween(800, 150_000) / 100) * 100,
