@@ -1,12 +1,13 @@
 import { type KeyboardEvent, useState } from "react";
 import { formatQuantity } from "#shared/values/engineering";
 import { parseQuantity } from "#shared/values/parse-quantity";
+import type { Unit } from "#shared/values/units";
 
 export type QuantityTextOptions = {
   /** SI; with the unit "%" a fraction: 0.05 reads as 5 %. */
   value: number | null;
   onChange: (value: number | null) => void;
-  unit: string;
+  unit: Unit;
   /** An empty box is an answer (null) rather than an error. */
   optional?: boolean;
   /** Shows the bare number where the words around it give the unit. */
@@ -38,18 +39,12 @@ export function useQuantityText(options: QuantityTextOptions) {
       report(null);
       return;
     }
-    if (draft.trim() === "") {
-      if (!optional) return report("Fill this in");
-      setDraft(null);
-      report(null);
-      onChange(null);
-      return;
-    }
-    const read = parseQuantity(draft, unit);
-    if (read === null) return report(unreadable(draft, unit));
+    const empty = draft.trim() === "";
+    const read = empty && optional ? { ok: true as const, value: null } : parseQuantity(draft, unit);
+    report(read.ok ? null : read.message);
+    if (!read.ok) return;
     setDraft(null);
-    report(null);
-    if (read !== value) onChange(read);
+    if (read.value !== value) onChange(read.value);
   };
 
   const onKeyDown = (event: KeyboardEvent<HTMLInputElement>) => {
@@ -78,29 +73,8 @@ export function useQuantityText(options: QuantityTextOptions) {
 }
 
 /** A value as it stands in the box: every digit it has, so that leaving the box changes nothing. */
-function formatForEditing(value: number | null, unit: string, unitHidden: boolean): string {
+function formatForEditing(value: number | null, unit: Unit, unitHidden: boolean): string {
   if (value === null) return "";
-  if (unit === "%") return `${plain(value * 100)} %`;
-  return unitHidden ? plain(value) : formatQuantity(value, unit, { exact: true });
-}
-
-/** Ten digits hide the rounding of a fraction times a hundred; the minus is a real one. */
-function plain(value: number): string {
-  return String(Number(value.toPrecision(10))).replace("-", "\u2212");
-}
-
-const EXAMPLES: Record<string, string> = {
-  V: "12 V or 800 mV",
-  A: "2 mA or 500 uA",
-  "\u03a9": "4.7 k or 4k7",
-  F: "100 n or 1 u",
-  Hz: "20 or 20 kHz",
-  W: "250 mW",
-  "%": "5 %",
-  "\u00b0C": "\u221210 or 50",
-};
-
-function unreadable(text: string, unit: string): string {
-  const example = EXAMPLES[unit];
-  return `“${text.trim()}” can't be read${example ? `; write it like ${example}` : " as a number"}`;
+  const text = formatQuantity(value, unit, { exact: true });
+  return unitHidden && text.endsWith(` ${unit}`) ? text.slice(0, -unit.length - 1) : text;
 }

@@ -1,27 +1,31 @@
 import { createContext, type ReactNode, useContext } from "react";
-import { formatPercent, formatQuantity } from "#shared/values/engineering";
-import { formatRkm } from "#shared/values/rkm";
+import {
+  formatPercent,
+  formatQuantity,
+  formatResistance,
+  type ResistanceStyle,
+} from "#shared/values/engineering";
+import type { Unit } from "#shared/values/units";
 import { classNames } from "./class-names";
 
-/** How resistances and capacitances are written: 4.7 kΩ, or 4k7 as marked on the part (IEC 60062). */
-export type ValueStyle = "engineering" | "marking";
+const ResistanceStyleContext = createContext<ResistanceStyle>("spelled");
 
-const ValueStyleContext = createContext<ValueStyle>("engineering");
+type ResistanceStyleProviderProps = { value: ResistanceStyle; children: ReactNode };
 
-type ValueStyleProviderProps = { style: ValueStyle; children: ReactNode };
-
-/** Sets how every `Value` below it writes resistances. */
-export function ValueStyleProvider({ style, children }: ValueStyleProviderProps) {
-  return <ValueStyleContext value={style}>{children}</ValueStyleContext>;
+/** Sets how every `Value` below it writes resistances: 4.7 kΩ, or 4k7 as marked on the part (IEC 60062). */
+export function ResistanceStyleProvider({ value, children }: ResistanceStyleProviderProps) {
+  return <ResistanceStyleContext value={value}>{children}</ResistanceStyleContext>;
 }
 
-type ValueProps = {
-  /** SI; null or undefined shows a dash. With the unit "%" a fraction. */
+export type ValueProps = {
+  /** SI, a fraction for "%"; null and undefined show a dash. */
   number: number | null | undefined;
-  unit: string;
-  /** Significant digits; three unless more are asked for. */
+  unit: Unit;
+  /** Significant digits; three unless more are asked for. Resistances keep every digit unless fewer are asked for. */
   digits?: number;
-  /** Every digit the number has, as for a value somebody chose. */
+  /** Places behind the point of a percentage. */
+  decimals?: number;
+  /** A stated figure: every digit it has and no more. */
   exact?: boolean;
   className?: string;
 };
@@ -32,10 +36,15 @@ export function Value({ className, ...rest }: ValueProps) {
 }
 
 /** The text that `Value` shows, for attributes and sentences. */
-export function useValueText({ number, unit, digits, exact }: Omit<ValueProps, "className">): string {
-  const style = useContext(ValueStyleContext);
-  if (number === null || number === undefined) return "–";
-  if (unit === "%") return formatPercent(number, digits ?? 3);
-  if (unit === "Ω" && style === "marking") return formatRkm(number);
+export function useValueText({
+  number,
+  unit,
+  digits,
+  decimals,
+  exact,
+}: Omit<ValueProps, "className">): string {
+  const style = useContext(ResistanceStyleContext);
+  if (unit === "Ω") return formatResistance(number ?? null, style, digits);
+  if (unit === "%" && !exact) return formatPercent(number, decimals);
   return formatQuantity(number, unit, { digits, exact });
 }
