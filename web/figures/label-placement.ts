@@ -47,12 +47,16 @@ export function placeLabels(
   return placed;
 }
 
-/** Mean width of a character of the text face, in ems; a little generous. */
-const CHARACTER_EMS = 0.54;
+/** Widths in ems by kind of character, measured on Instrument Sans at 400 and 600 and rounded up. */
+function characterEms(character: string): number {
+  if (" .,1ijl".includes(character)) return 0.28;
+  if ("mMW".includes(character)) return 0.94;
+  return /[A-ZΩµ]/.test(character) ? 0.77 : 0.6;
+}
 
 /** The width a text will take, estimated, since a drawing is laid out before it can be measured. */
 export function textWidth(text: string, fontSize: number): number {
-  return text.length * CHARACTER_EMS * fontSize;
+  return fontSize * [...text].reduce((ems, character) => ems + characterEms(character), 0);
 }
 
 function boxOf(text: string, { at, anchor }: LabelCandidate, fontSize: number): Box {

@@ -9,6 +9,12 @@ type LoadLineAxesProps = { data: LoadLineData; layout: LoadLineLayout };
 export function LoadLineAxes({ data, layout }: LoadLineAxesProps) {
   const { plot, xTicks, yTicks, currentUnit } = layout;
   const { before, drain, gate, after } = axisNames(data.polarity);
+  const lastTick = xTicks[xTicks.length - 1];
+  // Mono figures are 0.6 em wide and stand centred under their tick.
+  const afterLastTick = Math.max(
+    plot.right + 6,
+    lastTick ? lastTick.at + lastTick.label.length * 0.3 * layout.fontSize + 5 : 0,
+  );
   return (
     <>
       <g className="stroke-rule" strokeWidth="1">
@@ -49,7 +55,7 @@ export function LoadLineAxes({ data, layout }: LoadLineAxesProps) {
           {currentUnit}
         </text>
         <AxisName x={plot.right + 6} y={plot.top - 22} before={before} sub={gate} after={after} />
-        <AxisName x={plot.right + 12} y={plot.bottom + 17} before={before} sub={drain} after={after} />
+        <AxisName x={afterLastTick} y={plot.bottom + 17} before={before} sub={drain} after={after} />
       </g>
     </>
   );

@@ -52,6 +52,8 @@ function Drawing({ data, width }: { data: LoadLineData; width: number }) {
   return (
     <>
       <svg
+        // A new drawing for a new width: marks glide when values change, not when the window does.
+        key={width}
         viewBox={`0 0 ${width} ${height}`}
         role="img"
         aria-labelledby={titleId}
@@ -189,7 +191,7 @@ function Marks({ data, layout }: PartProps) {
   return (
     <>
       {data.corners.map(toPx).map(({ x, y }) => (
-        <circle key={`${x} ${y}`} data-part="corner" cx={x} cy={y} r="2" className="fill-ember/70" />
+        <circle key={`${x} ${y}`} data-part="corner" cx={x} cy={y} r="1.75" className="fill-ember/60" />
       ))}
       {data.transition && <OpenPoint at={toPx(data.transition)} part="transition" className="stroke-ohmic" />}
       {data.cutoff && <OpenPoint at={toPx(data.cutoff)} part="cutoff" className="stroke-cutoff" />}

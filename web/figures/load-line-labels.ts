@@ -165,7 +165,7 @@ function roomLabels(data: LoadLineData, { wave, x }: LoadLineLayout): Label[] {
     `${formatQuantity(volts, "V")} of room${clipped ? ", clips" : ""}`;
   const left = x(data.transition.vds);
   const right = x(data.cutoff.vds);
-  const rows = [wave.bottom - 24, wave.bottom + 6, wave.bottom + 19];
+  const rows = [wave.bottom - 22, wave.bottom + 10, wave.bottom + 28];
   return [
     {
       id: "room-ohmic",

@@ -24,6 +24,8 @@ export type LoadLineLayout = {
 };
 
 const NARROW = 560;
+/** Under the wave, for two lines of words where they find no room beside it. */
+const WAVE_FOOT = 36;
 const CURRENT_UNITS = [
   { unit: "A", size: 1 },
   { unit: "mA", size: 1e-3 },
@@ -50,7 +52,7 @@ export function layOutLoadLine(data: LoadLineData, width: number): LoadLineLayou
   const wave: Box | null = hasWave
     ? { left: plot.left, right: plot.right, top: waveTop, bottom: waveTop + (narrow ? 96 : 120) }
     : null;
-  const height = wave ? wave.bottom + 26 : plot.bottom + 30;
+  const height = wave ? wave.bottom + WAVE_FOOT : plot.bottom + 30;
 
   const x = scaleLinear([0, mostVolts(data)], [plot.left, plot.right]);
   const y = scaleLinear([0, mostAmperes(data)], [plot.bottom, plot.top]).nice(narrow ? 4 : 5);

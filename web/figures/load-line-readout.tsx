@@ -9,7 +9,7 @@ type ProbeReadoutProps = { probe: Probe; data: LoadLineData; layout: LoadLineLay
 const WIDTH = 148;
 const LINE = 17;
 
-/** The values at the point under the pointer or the keyboard, in a small box beside it. */
+/** The values at the point under the pointer or the keyboard, in a small box in the corner. */
 export function ProbeReadout({ probe, data, layout }: ProbeReadoutProps) {
   const { plot, toPx } = layout;
   const { x, y } = toPx(probe);
@@ -20,8 +20,9 @@ export function ProbeReadout({ probe, data, layout }: ProbeReadoutProps) {
   ];
   if (probe.onLine && data.room) rows.push(["output", signedVolts(outputAt(data, probe.vds))]);
   const height = LINE * (rows.length + (probe.name ? 1 : 0)) + 12;
-  const left = x + 16 + WIDTH > plot.right ? x - 16 - WIDTH : x + 16;
-  const top = Math.max(plot.top + 2, Math.min(y - height - 10, plot.bottom - height));
+  // The lines of a stage fall to the right, so the upper right corner is free, and the box doesn't chase the pointer.
+  const left = plot.right - WIDTH - 8;
+  const top = plot.top + 8;
   const first = top + 19;
   return (
     <g className="pointer-events-none" data-part="readout">

@@ -27,7 +27,7 @@ export function LoadLineWave({ data, layout }: LoadLineWaveProps) {
           strokeDasharray="1.5 4.5"
           strokeLinecap="round"
           strokeWidth="1.25"
-          className={`figure-move ${className}`}
+          className={`figure-move opacity-60 ${className}`}
         />
       ))}
       <path

@@ -20,6 +20,8 @@ type DataTableRowViewProps<T extends RowData> = {
   };
   onOpen?: () => void;
   expandedContent?: (row: T) => ReactNode;
+  /** The row's margin note where there is no margin. */
+  foldedNote?: ReactNode;
 };
 
 const CONTROLS = "a, button, input, select, textarea, label, [role='menuitem']";
@@ -44,6 +46,7 @@ export function DataTableRowView<T extends RowData>(props: DataTableRowViewProps
       <tr
         {...rowProps}
         onClick={rowProps && onClick}
+        data-margin-anchor={row.id}
         aria-rowindex={rowProps ? props.index + 2 : undefined}
         aria-level={expandable ? row.depth + 1 : undefined}
         aria-expanded={canExpand ? expanded : undefined}
@@ -89,6 +92,14 @@ export function DataTableRowView<T extends RowData>(props: DataTableRowViewProps
           </Cell>
         ))}
       </tr>
+      {props.foldedNote && (
+        <tr>
+          <td colSpan={columns.length} className="border-rule border-b py-2 pl-4">
+            {/* Stays in sight while the table under it scrolls sideways. */}
+            <div className="sticky left-4 max-w-[calc(100vw-4rem)]">{props.foldedNote}</div>
+          </td>
+        </tr>
+      )}
       {expanded && expandedContent && (
         <tr>
           <td colSpan={columns.length} className="border-rule border-b px-2.5 py-4">

@@ -11,7 +11,9 @@ import {
   useDataTableModel,
 } from "./data-table-model";
 import { DataTableRowView } from "./data-table-row";
+import { MarginColumn, WIDE_ENOUGH_FOR_MARGIN } from "./margin-column";
 import { useElementWidth } from "./use-element-width";
+import { useMediaQuery } from "./use-media-query";
 import { useRowMovement } from "./use-row-movement";
 
 export type DataTableProps<T extends RowData> = {
@@ -42,6 +44,8 @@ export type DataTableProps<T extends RowData> = {
   /** Rows drawn at first and added by "Show more". */
   pageSize?: number;
   footer?: ReactNode;
+  /** A note about a row for the margin at the right; null for a row that has none. It folds under its row on a phone. */
+  marginNote?: (row: T) => ReactNode;
   className?: string;
 };
 
@@ -89,53 +93,60 @@ export function DataTable<T extends RowData>(props: DataTableProps<T>) {
   const [tableRef, tableWidth] = useElementWidth();
   const overflows = boxWidth !== null && tableWidth !== null && tableWidth > boxWidth + 1;
   const shownColumns = columns.filter((column) => table.getColumn(column.id)?.getIsVisible() ?? true);
+  const wide = useMediaQuery(WIDE_ENOUGH_FOR_MARGIN);
+  const notes = props.marginNote
+    ? shownRows.map((row) => ({ id: row.id, content: props.marginNote?.(row.original) ?? null }))
+    : null;
   const hasMenu = columns.some((column) => column.hideable);
 
   return (
     <div className={classNames("min-w-0", props.className)}>
       {(props.toolbar || hasMenu) && (
         <div className="flex flex-wrap items-baseline justify-between gap-x-6 gap-y-2 pb-2">
-          <div className="min-w-0">{props.toolbar}</div>
+          <div className="min-w-0 grow">{props.toolbar}</div>
           {hasMenu && <ColumnMenu columns={columns} table={table} />}
         </div>
       )}
       {rows.length === 0 && props.empty ? (
         props.empty
       ) : (
-        <section
-          ref={boxRef}
-          aria-label={overflows ? `${label}, scrolls sideways` : undefined}
-          // A box that scrolls must be reachable by keyboard; rows that take the focus make it so already.
-          tabIndex={overflows && !interactive ? 0 : undefined}
-          className={overflows ? "overflow-x-auto" : undefined}
-        >
-          <table
-            ref={tableRef}
-            role={interactive ? (expandable ? "treegrid" : "grid") : undefined}
-            aria-rowcount={interactive ? allRows.length + 1 : undefined}
-            className="w-full border-separate border-spacing-0"
+        <MarginColumn notes={notes} shown={wide}>
+          <section
+            ref={boxRef}
+            aria-label={overflows ? `${label}, scrolls sideways` : undefined}
+            // A box that scrolls must be reachable by keyboard; rows that take the focus make it so already.
+            tabIndex={overflows && !interactive ? 0 : undefined}
+            className={overflows ? "overflow-x-auto" : undefined}
           >
-            <caption className="sr-only">{label}</caption>
-            <DataTableHeader columns={shownColumns} table={table} sticky={!overflows} />
-            <tbody>
-              {shownRows.map((row, index) => (
-                <DataTableRowView
-                  key={row.id}
-                  row={row}
-                  index={index}
-                  columns={shownColumns}
-                  expandable={expandable}
-                  active={movement.activeId === row.id}
-                  marked={props.markedId === row.id}
-                  rowProps={interactive ? movement.rowProps(row.id) : undefined}
-                  onOpen={interactive && onOpen ? () => onOpen(row.original) : undefined}
-                  expandedContent={renderExpanded}
-                />
-              ))}
-            </tbody>
-            {props.footer && <tfoot>{props.footer}</tfoot>}
-          </table>
-        </section>
+            <table
+              ref={tableRef}
+              role={interactive ? (expandable ? "treegrid" : "grid") : undefined}
+              aria-rowcount={interactive ? allRows.length + 1 : undefined}
+              className="w-full border-separate border-spacing-0"
+            >
+              <caption className="sr-only">{label}</caption>
+              <DataTableHeader columns={shownColumns} table={table} sticky={!overflows} />
+              <tbody>
+                {shownRows.map((row, index) => (
+                  <DataTableRowView
+                    key={row.id}
+                    row={row}
+                    index={index}
+                    columns={shownColumns}
+                    expandable={expandable}
+                    active={movement.activeId === row.id}
+                    marked={props.markedId === row.id}
+                    rowProps={interactive ? movement.rowProps(row.id) : undefined}
+                    onOpen={interactive && onOpen ? () => onOpen(row.original) : undefined}
+                    expandedContent={renderExpanded}
+                    foldedNote={wide ? null : notes?.[index].content}
+                  />
+                ))}
+              </tbody>
+              {props.footer && <tfoot>{props.footer}</tfoot>}
+            </table>
+          </section>
+        </MarginColumn>
       )}
       {allRows.length > shownRows.length && (
         <p className="flex items-baseline gap-4 pt-4 text-quiet">

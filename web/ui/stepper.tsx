@@ -18,18 +18,18 @@ export function Stepper({ label, value, lower, higher, onStep, disabled = false 
   return (
     <fieldset
       disabled={disabled}
-      className="grid grid-cols-[2.75rem_auto_1fr_auto_7.5rem] items-center gap-x-2 border-rule border-b py-1"
+      className="grid grid-cols-[2.75rem_auto_1fr_auto_7.5rem] print:grid-cols-[2.75rem_1fr] items-center gap-x-2 border-rule border-b py-1"
     >
       <legend className="sr-only">{label}</legend>
       <span aria-hidden="true" className="font-medium">
         {label}
       </span>
       <StepButton direction="lower" label={label} to={lower} onStep={onStep} />
-      <output aria-live="polite" className="value text-center text-lg">
+      <output aria-live="polite" className="value text-center text-lg print:text-right">
         {value}
       </output>
       <StepButton direction="higher" label={label} to={higher} onStep={onStep} />
-      <span aria-hidden="true" className="value text-right text-quiet text-sm">
+      <span aria-hidden="true" data-no-print="" className="value text-right text-quiet text-sm">
         {lower ?? "–"} · {higher ?? "–"}
       </span>
     </fieldset>
