@@ -1,0 +1,37 @@
+import { defineConfig } from "@playwright/test";
+
+const address = process.env.EVENSWING_URL;
+if (!address) {
+  throw new Error("Journeys need a running product: run them with `npm test -- tests/journeys`.");
+}
+
+export default defineConfig({
+  testDir: "tests/journeys",
+  testMatch: "**/*.spec.ts",
+  outputDir: "test-results",
+  retries: 0,
+  workers: 2,
+  forbidOnly: true,
+  timeout: 60_000,
+  globalTimeout: 20 * 60_000,
+  // `npm test` counts from the JSON report; started by hand, there is none.
+  reporter: process.env.PLAYWRIGHT_JSON_OUTPUT_FILE ? [["list"], ["json"]] : [["list"]],
+  use: {
+    baseURL: address,
+    trace: "retain-on-failure",
+    screenshot: "only-on-failure",
+    viewport: { width: 1440, height: 900 },
+    launchOptions: {
+      executablePath: "/usr/bin/chromium",
+      args: [
+        "--no-sandbox",
+        "--disable-gpu",
+        "--disable-quic",
+        "--no-first-run",
+        "--disable-background-networking",
+        "--disable-component-update",
+        "--disable-sync",
+      ],
+    },
+  },
+});

@@ -1,0 +1,5 @@
+import { requireNode } from "./lib/node-version.mjs";
+
+requireNode();
+const { developProduct } = await import("./lib/develop-product.mjs");
+await developProduct();
