@@ -28,12 +28,12 @@ export function LoadLineAxes({ data, layout }: LoadLineAxesProps) {
       </g>
       <g className="fill-quiet font-mono tabular">
         {xTicks.map(({ at, label }) => (
-          <text key={at} x={at} y={plot.bottom + 17} textAnchor="middle">
+          <text key={at} data-tick="volts" x={at} y={plot.bottom + 17} textAnchor="middle">
             {label}
           </text>
         ))}
         {yTicks.map(({ at, label }) => (
-          <text key={at} x={plot.left - 8} y={at} dy="0.33em" textAnchor="end">
+          <text key={at} data-tick="current" x={plot.left - 8} y={at} dy="0.33em" textAnchor="end">
             {label}
           </text>
         ))}

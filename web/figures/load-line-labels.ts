@@ -155,6 +155,8 @@ function edgeLabel({ edge }: LoadLineData, { toPx, plot }: LoadLineLayout): Labe
       ? [beside(last.x, plot.top, 8, -9), beside(last.x, plot.top, -4, -9)]
       : [beside(last.x, last.y, 8, -4)]),
     ...lower.flatMap(({ x, y }) => [beside(x, y, 10, 0), beside(x, y, -10, 0)]),
+    // Where the edge lies flat at the foot, as with a device of little gain, the words go well above it.
+    ...lower.flatMap(({ x, y }) => [20, 36, 52, 68].map((rise) => beside(x, y, -8, -rise))),
   ];
   return { id: "edge", text: "edge of saturation", candidates };
 }

@@ -41,7 +41,7 @@ export function LoadLineTable({ data }: { data: LoadLineData }) {
               </th>
               <td className={`${cell} value text-right`}>{formatQuantity(point.vds, "V")}</td>
               <td className={`${cell} value text-right`}>{formatQuantity(point.id, "A")}</td>
-              <td className={`${cell} value text-right`}>{output === null ? "–" : signedVolts(output)}</td>
+              <td className={`${cell} value text-right`}>{output === null ? "—" : signedVolts(output)}</td>
             </tr>
           ))}
         </tbody>

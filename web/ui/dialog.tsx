@@ -16,9 +16,9 @@ type DialogProps = {
 };
 
 /**
- * A window over the page that holds the focus until it is closed. The backdrop is our own element and the page is held
- * still by the style sheet, because the library's scroll lock writes a style element, which the content security
- * policy refuses.
+ * A window over the page that holds the focus until it is closed. The backdrop is our own element, which takes the
+ * wheel so that the page stands still, because the library's scroll lock writes a style element and the content
+ * security policy refuses that.
  */
 export function Dialog({
   open,
@@ -32,7 +32,9 @@ export function Dialog({
   return (
     <RadixDialog.Root open={open} onOpenChange={onOpenChange}>
       <RadixDialog.Portal>
-        <div data-dialog-backdrop="" className="fixed inset-0 z-40 bg-[#1b2430]/40" />
+        <div className="fixed inset-0 z-40 overflow-y-scroll overscroll-contain bg-backdrop [scrollbar-width:none]">
+          <div className="h-[calc(100%+1px)]" />
+        </div>
         <RadixDialog.Content
           aria-describedby={description ? undefined : ""}
           className={classNames(
@@ -41,22 +43,21 @@ export function Dialog({
             size === "wide" ? "max-w-3xl" : "max-w-lg",
           )}
         >
-          <header className="flex items-start justify-between gap-4 px-6 pt-5 pb-3">
-            <div>
-              <RadixDialog.Title className="font-semibold text-lg">{title}</RadixDialog.Title>
-              {description && (
-                <RadixDialog.Description className="mt-1 text-quiet">{description}</RadixDialog.Description>
-              )}
-            </div>
-            <RadixDialog.Close
-              aria-label="Close"
-              className="-mr-2 rounded-md p-2 text-quiet hover:bg-panel hover:text-ink"
-            >
-              <Icon name="cross" />
-            </RadixDialog.Close>
+          <header className="pt-5 pr-14 pb-3 pl-6">
+            <RadixDialog.Title className="font-semibold text-lg">{title}</RadixDialog.Title>
+            {description && (
+              <RadixDialog.Description className="mt-1 text-quiet">{description}</RadixDialog.Description>
+            )}
           </header>
           {children && <div className="overflow-y-auto px-6 py-2">{children}</div>}
           {footer && <footer className="flex flex-wrap justify-end gap-2 px-6 pt-3 pb-5">{footer}</footer>}
+          {/* Last, so that the focus starts in the content. */}
+          <RadixDialog.Close
+            aria-label="Close"
+            className="absolute top-4 right-4 inline-flex rounded-md p-2 text-quiet hover:bg-panel hover:text-ink"
+          >
+            <Icon name="cross" />
+          </RadixDialog.Close>
         </RadixDialog.Content>
       </RadixDialog.Portal>
     </RadixDialog.Root>

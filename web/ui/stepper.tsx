@@ -30,7 +30,7 @@ export function Stepper({ label, value, lower, higher, onStep, disabled = false 
       </output>
       <StepButton direction="higher" label={label} to={higher} onStep={onStep} />
       <span aria-hidden="true" data-no-print="" className="value text-right text-quiet text-sm">
-        {lower ?? "–"} · {higher ?? "–"}
+        {lower ?? "—"} · {higher ?? "—"}
       </span>
     </fieldset>
   );
