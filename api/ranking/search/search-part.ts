@@ -96,14 +96,7 @@ export class Search {
       power: deratingPower * permittedDissipation(figures, ambientMax),
     };
     const kUpper = device.k * (1 + device.lambda * vdd);
-    for (const sameDrain of this.#lines) {
-      for (const line of sameDrain) {
-        const threshold = best.threshold;
-        // With no centring error left to beat, only a greater swing gets in; and the swing falls as RS grows.
-        if (threshold?.bucket === 0 && nanovolts(swingBound(vdd, kUpper, line)) < threshold.swing) break;
-        this.#searchLine(device, line, best);
-      }
-    }
+    for (const lines of this.#lines) this.#searchBlock(device, kUpper, lines, 0, lines.length - 1, best);
     return CONDITIONS[this.#furthest];
   }
 
@@ -111,9 +104,41 @@ export class Search {
     this.#furthest = Math.max(this.#furthest, CONDITIONS.indexOf(condition));
   }
 
+  /** All lines of one RD from one RS to another, halved until a block can be left out or is a single line. */
+  #searchBlock(
+    device: Device,
+    kUpper: number,
+    lines: Line[],
+    from: number,
+    to: number,
+    best: BestCandidates,
+  ): void {
+    const first = lines[from];
+    const last = lines[to];
+    const threshold = best.threshold;
+    // With no centring error left to beat, only a greater swing gets in; and the swing falls as RS grows.
+    if (threshold?.bucket === 0) {
+      if (nanovolts(swingBound(this.#problem.vdd, kUpper, first)) < threshold.swing) return;
+    }
+    if (from === to) {
+      this.#searchLine(device, first, best);
+      return;
+    }
+    const span = this.#allowedSpan(device, first, last, best);
+    if (!span) return;
+    const impossible = this.#pointwise && this.#impossible(device, first, last, span);
+    if (impossible) {
+      this.#fail(impossible);
+      return;
+    }
+    const middle = (from + to) >> 1;
+    this.#searchBlock(device, kUpper, lines, from, middle, best);
+    this.#searchBlock(device, kUpper, lines, middle + 1, to, best);
+  }
+
   /** All dividers of one pair RD, RS. */
   #searchLine(device: Device, line: Line, best: BestCandidates): void {
-    const span = this.#allowedSpan(device, line, best);
+    const span = this.#allowedSpan(device, line, line, best);
     if (!span) return;
     const { vdd } = this.#problem;
     const spans = spansWithinDissipation(span, vdd, line.total, device.power);
@@ -126,11 +151,14 @@ export class Search {
     }
   }
 
-  /** The currents that the conditions which are plain ranges allow, and that could still enter the list. */
-  #allowedSpan({ k, lambda }: Device, line: Line, best: BestCandidates): Span | null {
+  /**
+   * The currents that the conditions which are plain ranges allow on some line of a block, and that could still enter
+   * the list; null where there are none. Every current here falls as RS grows, so each end comes from an end line.
+   */
+  #allowedSpan({ k, lambda }: Device, first: Line, last: Line, best: BestCandidates): Span | null {
     const problem = this.#problem;
     const { vdd } = problem;
-    const span = { low: problem.swingPeak / line.load, high: Number.POSITIVE_INFINITY };
+    const span = { low: problem.swingPeak / first.load, high: Number.POSITIVE_INFINITY };
     const narrow = (condition: Condition | null, low: number, high: number) => {
       span.low = Math.max(span.low, low);
       span.high = Math.min(span.high, high);
@@ -139,10 +167,10 @@ export class Search {
       return false;
     };
     const leastDivider = vdd / (2 * problem.divider[problem.divider.length - 1]);
-    const leastForDrop = problem.sourceDropMin > 0 ? problem.sourceDropMin / line.rs : 0;
-    const mostForHeat = Math.sqrt(problem.resistorPower / Math.max(line.rd, line.rs));
+    const leastForDrop = problem.sourceDropMin > 0 ? problem.sourceDropMin / last.rs : 0;
+    const mostForHeat = Math.sqrt(problem.resistorPower / Math.max(first.rd, first.rs));
     const allowed =
-      narrow("swing", 0, currentForOhmicRoom(vdd, k, lambda, line, problem.swingPeak)) &&
+      narrow("swing", 0, currentForOhmicRoom(vdd, k, lambda, first, problem.swingPeak)) &&
       narrow("supply-current", 0, problem.supplyCurrentMax - leastDivider) &&
       narrow("source-drop", leastForDrop, Number.POSITIVE_INFINITY) &&
       narrow("resistor-rating", 0, mostForHeat);
@@ -150,20 +178,30 @@ export class Search {
     const threshold = best.threshold;
     if (threshold && threshold.bucket < 99) {
       const c = (threshold.bucket + 1) / 100;
-      const low = currentAtCentring(vdd, k, lambda, line, -c);
-      if (!narrow(null, low, currentAtCentring(vdd, k, lambda, line, c))) return null;
+      const low = currentAtCentring(vdd, k, lambda, last, -c);
+      if (!narrow(null, low, currentAtCentring(vdd, k, lambda, first, c))) return null;
     }
     if (threshold?.bucket === 0) {
       const swing = (threshold.swing - 1) * 1e-9;
-      const high = currentForOhmicRoom(vdd, k, lambda, line, swing);
-      if (!narrow(null, swing / line.load, high)) return null;
+      const high = currentForOhmicRoom(vdd, k, lambda, first, swing);
+      if (!narrow(null, swing / first.load, high)) return null;
     }
     return { low: span.low * (1 - SLACK), high: span.high * (1 + SLACK) };
   }
 
+  #impossible(device: Device, first: Line, last: Line, span: Span): Condition | null {
+    return impossibleIn(this.#problem, device, { first, last }, span, this.#leastInput);
+  }
+
   /** Halves a span again and again and keeps the slices in which every condition might be met. */
   #possibleSlices(device: Device, line: Line, span: Span, halvings: number): Span[] {
-    const impossible = impossibleIn(this.#problem, device, line, span, this.#leastInput);
+    const impossible = impossibleIn(
+      this.#problem,
+      device,
+      { first: line, last: line },
+      span,
+      this.#leastInput,
+    );
     if (impossible) {
       this.#fail(impossible);
       return [];
@@ -233,7 +271,10 @@ export class Search {
       if (bucket > threshold.bucket || nanovolts(symmetric) < threshold.swing) return false;
     }
     const point = { x, id, vds, symmetric };
-    const failed = failedCondition(this.#problem, device, line, point);
+    // The bounds at this one current are cheaper than the wave, and mostly decide.
+    const failed =
+      (this.#pointwise && this.#impossible(device, line, line, { low: id, high: id })) ||
+      failedCondition(this.#problem, device, line, point);
     if (failed) this.#fail(failed);
     else this.#offerPairs(device, line, at, point, bucket, best);
     return true;
