@@ -32,7 +32,7 @@ export function Dialog({
   return (
     <RadixDialog.Root open={open} onOpenChange={onOpenChange}>
       <RadixDialog.Portal>
-        <div className="fixed inset-0 z-40 overflow-y-scroll overscroll-contain bg-backdrop [scrollbar-width:none]">
+        <div className="pointer-events-auto fixed inset-0 z-40 overflow-y-scroll overscroll-contain bg-backdrop [scrollbar-width:none]">
           <div className="h-[calc(100%+1px)]" />
         </div>
         <RadixDialog.Content
