@@ -1,4 +1,4 @@
-import type { ChangeEvent } from "react";
+import type { ChangeEvent, ReactNode } from "react";
 import { classNames } from "./class-names";
 import type { SelectOption } from "./select";
 import { type QuantityTextOptions, useQuantityText } from "./use-quantity-text";
@@ -15,14 +15,17 @@ type BlankInputProps = QuantityTextOptions & {
   errorId?: string;
   /** Shown while empty. */
   placeholder?: string;
+  /** Punctuation that follows, kept on the same line. */
+  after?: string;
 };
 
 /** A blank in a sentence, filled in with a quantity; as wide as what stands in it. */
-export function BlankInput({ label, error, errorId, placeholder = "", ...options }: BlankInputProps) {
+export function BlankInput(props: BlankInputProps) {
+  const { label, error, errorId, placeholder = "", after, ...options } = props;
   const quantity = useQuantityText(options);
   const invalid = Boolean(error || quantity.error);
   const length = Math.max(2, (quantity.text || placeholder).length);
-  return (
+  const blank = (
     <input
       type="text"
       autoComplete="off"
@@ -38,6 +41,16 @@ export function BlankInput({ label, error, errorId, placeholder = "", ...options
       style={{ width: `calc(${length}ch + 1rem)` }}
     />
   );
+  return <WithPunctuation after={after}>{blank}</WithPunctuation>;
+}
+
+function WithPunctuation({ after, children }: { after: string | undefined; children: ReactNode }) {
+  return (
+    <span className="whitespace-nowrap">
+      {children}
+      {after}
+    </span>
+  );
 }
 
 type BlankSelectProps<T extends string> = {
@@ -47,17 +60,18 @@ type BlankSelectProps<T extends string> = {
   onChange: (value: T) => void;
   error?: string | null;
   errorId?: string;
+  after?: string;
 };
 
 /** A blank in a sentence, filled in from a list; as wide as the choice. */
 export function BlankSelect<T extends string>(props: BlankSelectProps<T>) {
-  const { label, options, value, onChange, error, errorId } = props;
+  const { label, options, value, onChange, error, errorId, after } = props;
   const chosen = options.find((option) => option.value === value);
   const choose = (event: ChangeEvent<HTMLSelectElement>) => {
     const option = options.find((candidate) => candidate.value === event.target.value);
     if (option) onChange(option.value);
   };
-  return (
+  const blank = (
     <select
       aria-label={label}
       aria-invalid={error ? true : undefined}
@@ -74,4 +88,5 @@ export function BlankSelect<T extends string>(props: BlankSelectProps<T>) {
       ))}
     </select>
   );
+  return <WithPunctuation after={after}>{blank}</WithPunctuation>;
 }

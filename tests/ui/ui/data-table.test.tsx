@@ -191,17 +191,15 @@ describe("what is shown", () => {
     ["in the margin of a wide screen", true],
     ["under its row on a narrow one", false],
   ])("a note about a row stands once, %s", (_, wide) => {
-    const query = vi
-      .spyOn(window, "matchMedia")
-      .mockImplementation(
-        (media) =>
-          ({
-            media,
-            matches: wide,
-            addEventListener() {},
-            removeEventListener() {},
-          }) as unknown as MediaQueryList,
-      );
+    const query = vi.spyOn(window, "matchMedia").mockImplementation(
+      (media) =>
+        ({
+          media,
+          matches: wide,
+          addEventListener() {},
+          removeEventListener() {},
+        }) as unknown as MediaQueryList,
+    );
     show({ marginNote: (fit) => (fit.id === "b" ? <p>Two short</p> : null) });
     const note = screen.getByText("Two short");
     expect(note.closest("table") !== null).toBe(!wide);
