@@ -4,8 +4,6 @@ import { defineConfig } from "vitest/config";
 export default defineConfig({
   test: {
     maxWorkers: Math.max(2, availableParallelism()),
-    // No file may count on another having run before it.
-    sequence: { shuffle: { files: true } },
     projects: [
       project("domain", ["tests/domain/**/*.test.ts"]),
       project("reference", ["tests/reference/**/*.test.ts"], { testTimeout: 60_000 }),

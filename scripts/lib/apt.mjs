@@ -2,7 +2,7 @@ import { findProgram, run } from "./programs.mjs";
 import { Trouble } from "./trouble.mjs";
 
 /** The Debian packages this project uses, by the program that shows that one is there. */
-export const packageOf = { mariadbd: "mariadb-server", chromium: "chromium", ngspice: "ngspice" };
+const packageOf = { mariadbd: "mariadb-server", chromium: "chromium", ngspice: "ngspice" };
 
 /** @typedef {keyof typeof packageOf} NeededProgram */
 

@@ -11,12 +11,14 @@ import { Trouble } from "./trouble.mjs";
 const READY_WITHIN_MS = 120_000;
 const GRACE_MS = 30_000;
 
+/** The usual 96 MB would be most of what a new data folder takes, in time and in room. */
+const LOG_SIZE = "--innodb-log-file-size=32M";
+
 /** For data that is thrown away afterwards: nothing waits for the disk. */
 const CARELESS = [
   "--innodb-flush-log-at-trx-commit=0",
   "--innodb-flush-method=nosync",
   "--innodb-doublewrite=0",
-  "--innodb-log-file-size=32M",
   "--innodb-file-per-table=0",
   "--max-connections=500",
 ];
@@ -48,7 +50,7 @@ export function randomPassword() {
  */
 export async function startMariadb({ folder, port, account, statements = [], careless = false }) {
   await endProcesses(processesKeptIn(folder), GRACE_MS);
-  await makeDataFolder(folder);
+  await makeDataFolder(folder, careless);
   const log = join(folder, "server.log");
   const setUp = join(folder, "set-up.sql");
   writePrivate(setUp, [...accountStatements(account), ...statements].join("\n"));
@@ -70,6 +72,7 @@ export async function startMariadb({ folder, port, account, statements = [], car
     "--default-time-zone=+00:00",
     "--character-set-server=utf8mb4",
     "--collation-server=utf8mb4_unicode_ci",
+    LOG_SIZE,
     ...(careless ? CARELESS : []),
   ];
   const server = launch(serverProgram(), args, { graceMs: GRACE_MS });
@@ -91,8 +94,11 @@ function accountStatements({ user, password, databases }) {
   ];
 }
 
-/** @param {string} folder */
-async function makeDataFolder(folder) {
+/**
+ * @param {string} folder
+ * @param {boolean} careless
+ */
+async function makeDataFolder(folder, careless) {
   if (existsSync(join(folder, "mysql"))) return;
   // Made under another name first, so that a folder is either whole or not there.
   const unfinished = `${folder}.unfinished`;
@@ -108,6 +114,8 @@ async function makeDataFolder(folder) {
     `--datadir=${unfinished}`,
     "--auth-root-authentication-method=normal",
     "--skip-test-db",
+    LOG_SIZE,
+    ...(careless ? CARELESS : []),
   ];
   await run(installer, args, { failure: "MariaDB could not make its data folder. It said last:" });
   chmodSync(unfinished, 0o700);

@@ -9,7 +9,7 @@ const TRIED = 50;
  * @param {number} port
  * @returns {Promise<"free" | "taken" | "forbidden">}
  */
-export function tryPort(port) {
+function tryPort(port) {
   return new Promise((resolve) => {
     const server = createServer();
     server.once("error", (error) =>

@@ -141,6 +141,7 @@ async function openTestDatabase() {
     // Browser profiles and the like go into the run's folder, and so go away with it.
     TMPDIR: join(folder, "tmp"),
     TEST_DATABASE_URL: databaseUrl(""),
+    ...(process.stdout.isTTY ? {} : { NO_COLOR: "1", FORCE_COLOR: undefined }),
   };
   return { folder, cleared, env, databaseUrl };
 }
@@ -165,7 +166,7 @@ async function check(env, say) {
   const tally = emptyTally();
   for (const name of Object.keys(scripts).filter((script) => script.startsWith("check:"))) {
     const begun = performance.now();
-    const { code, lines } = await run("npm", ["run", "--silent", name], { cwd: root, env, keptLines: 200 });
+    const { code, lines } = await run("npm", ["run", "--silent", name], { cwd: root, env, keptLines: 80 });
     console.log(`  ${code === 0 ? "✓" : "✗"} ${name} (${seconds(begun)})`);
     if (code === 0) tally.passed += 1;
     else {
