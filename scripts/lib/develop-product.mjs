@@ -47,10 +47,12 @@ async function develop() {
 
   const apiPort = await freePortFrom(FIRST_API_PORT);
   const port = await freePortFrom(wished);
+  const address = `http://127.0.0.1:${port}`;
   const keptIn = `--kept-in=${dataFolder}`;
   const server = launch(process.execPath, [packaged("tsx/dist/cli.mjs"), "watch", "api/main.ts", keptIn], {
     cwd: root,
-    env: { ...env, PORT: String(apiPort) },
+    // The browser talks to the interface's server, which passes requests on.
+    env: { PUBLIC_ORIGIN: address, ...env, PORT: String(apiPort) },
     output: prefixed("api"),
   });
   const viteArgs = ["--host", "127.0.0.1", "--port", String(port), "--strictPort", "--clearScreen", "false"];
@@ -59,7 +61,6 @@ async function develop() {
     env: { ...process.env, EVENSWING_API_PORT: String(apiPort) },
     output: prefixed("web"),
   });
-  const address = `http://127.0.0.1:${port}`;
   folder.answersAt(address);
   console.log(`\nOpen ${address}; the API is at http://127.0.0.1:${apiPort}. Ctrl-C stops both.\n`);
 
