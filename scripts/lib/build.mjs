@@ -67,6 +67,7 @@ async function buildServer() {
   ];
   await run(packaged(".bin/esbuild"), args, {
     cwd: root,
+    keptLines: 60,
     failure: "The server could not be built. esbuild said last:",
   });
 }
