@@ -20,3 +20,11 @@ export const meSchema = z.object({
 export type SignIn = z.infer<typeof signInSchema>;
 export type SwitchTeam = z.infer<typeof switchTeamSchema>;
 export type Me = z.infer<typeof meSchema>;
+
+/** The accounts of the demo, while it runs. */
+export const demoAccountsSchema = z.object({
+  password: z.string(),
+  accounts: z.array(z.object({ email: z.string(), role: z.enum(ROLES), team: z.string() })),
+});
+
+export type DemoAccounts = z.infer<typeof demoAccountsSchema>;
