@@ -41,8 +41,8 @@ async function develop() {
     await migrate(env, "source");
     say("up to date");
   });
-  await step("Catalog and demo story", async (say) => {
-    say((await fillOnce(database, () => seed(env))) ? "loaded" : "there already");
+  await step(env.DEMO_MODE === "1" ? "Catalog and demo story" : "Catalog", async (say) => {
+    say((await fillOnce(database, env, () => seed(env))) ? "loaded" : "there already");
   });
 
   const apiPort = await freePortFrom(FIRST_API_PORT);

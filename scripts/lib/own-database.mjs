@@ -87,15 +87,18 @@ function keptPassword() {
 }
 
 /**
- * Does the first filling of a database once.
+ * Does the first filling of a database once; again only where the demo story is to be added to a bare catalog.
  *
  * @param {Database} database
+ * @param {NodeJS.ProcessEnv} env with DEMO_MODE
  * @param {() => Promise<void>} fill
  * @returns {Promise<boolean>} whether it was filled now
  */
-export async function fillOnce({ seededMark }, fill) {
-  if (existsSync(seededMark)) return false;
+export async function fillOnce({ seededMark }, env, fill) {
+  const wanted = env.DEMO_MODE === "1" ? "catalog and demo" : "catalog";
+  const there = existsSync(seededMark) ? readFileSync(seededMark, "utf8") : "";
+  if (there.startsWith(wanted)) return false;
   await fill();
-  writeFileSync(seededMark, "");
+  writeFileSync(seededMark, wanted);
   return true;
 }

@@ -72,8 +72,8 @@ async function start(args) {
     await migrate(env, "built");
     say("up to date");
   });
-  await step("Catalog and demo story", async (say) => {
-    say((await fillOnce(database, () => seed(env))) ? "loaded" : "there already");
+  await step(env.DEMO_MODE === "1" ? "Catalog and demo story" : "Catalog", async (say) => {
+    say((await fillOnce(database, env, () => seed(env))) ? "loaded" : "there already");
   });
   const { port, server, startAgain } = await step("Server", async (say) => {
     const free = await freePortFrom(wished);
