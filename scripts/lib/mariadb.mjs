@@ -1,5 +1,14 @@
 import { randomBytes } from "node:crypto";
-import { chmodSync, existsSync, mkdirSync, readFileSync, renameSync, rmSync, writeFileSync } from "node:fs";
+import {
+  chmodSync,
+  existsSync,
+  mkdirSync,
+  readdirSync,
+  readFileSync,
+  renameSync,
+  rmSync,
+  writeFileSync,
+} from "node:fs";
 import { connect } from "node:net";
 import { join } from "node:path";
 import { setTimeout as wait } from "node:timers/promises";
@@ -100,10 +109,14 @@ function accountStatements({ user, password, databases }) {
  */
 async function makeDataFolder(folder, careless) {
   if (existsSync(join(folder, "mysql"))) return;
+  if (existsSync(folder) && readdirSync(folder).length > 0) {
+    throw new Trouble(
+      `${folder} is damaged: its system tables are gone. Move it away to start with an empty one.`,
+    );
+  }
   // Made under another name first, so that a folder is either whole or not there.
   const unfinished = `${folder}.unfinished`;
   rmSync(unfinished, { recursive: true, force: true });
-  rmSync(folder, { recursive: true, force: true });
   mkdirSync(unfinished, { recursive: true, mode: 0o700 });
   const installer = findProgram("mariadb-install-db");
   if (!installer)

@@ -1,5 +1,5 @@
 import { spawn } from "node:child_process";
-import { mkdirSync, statSync, writeFileSync } from "node:fs";
+import { existsSync, mkdirSync, statSync, writeFileSync } from "node:fs";
 import { join } from "node:path";
 import mysql from "mysql2/promise";
 import { expect, onTestFinished, test } from "vitest";
@@ -85,4 +85,11 @@ test("says what MariaDB's log says when it can't start", async () => {
   await expect(start(other, { port })).rejects.toThrow(
     /MariaDB ended instead of starting[\s\S]*Address already in use/,
   );
+});
+
+test("does not throw away a data folder that it can't read", async () => {
+  const folder = join(temporaryFolder(), "data");
+  mkdirSync(join(folder, "evenswing"), { recursive: true });
+  await expect(start(folder)).rejects.toThrow("is damaged: its system tables are gone");
+  expect(existsSync(join(folder, "evenswing"))).toBe(true);
 });
