@@ -1,0 +1,67 @@
+import { queryOptions, useMutation, useQueryClient } from "@tanstack/react-query";
+import type { z } from "zod";
+import { partSchema } from "#shared/schemas/part";
+import { type keepStageSchema, type Stage, stageSchema, type UpdateStage } from "#shared/schemas/stage";
+import { callApi } from "../../lib/api";
+import { stagesQuery } from "../../lib/lists";
+
+const oneKey = (id: number) => ["stages", id] as const;
+
+export const stageQuery = (id: number) =>
+  queryOptions({
+    queryKey: oneKey(id),
+    queryFn: ({ signal }) => callApi(`/stages/${id}`, { schema: stageSchema, signal }),
+  });
+
+/** The part of a fit that isn't kept yet. */
+export const partQuery = (id: number) =>
+  queryOptions({
+    queryKey: ["parts", id],
+    queryFn: ({ signal }) => callApi(`/parts/${id}`, { schema: partSchema, signal }),
+  });
+
+/** Takes a stage that the server answered with into the cache. */
+function useTakeIn() {
+  const client = useQueryClient();
+  return (stage: Stage) => {
+    client.setQueryData(oneKey(stage.id), stage);
+    return client.invalidateQueries({ queryKey: stagesQuery.queryKey, exact: true });
+  };
+}
+
+export function useKeepStage() {
+  const takeIn = useTakeIn();
+  return useMutation({
+    mutationFn: (input: z.input<typeof keepStageSchema>) =>
+      callApi("/stages", { method: "POST", body: input, schema: stageSchema }),
+    onSuccess: takeIn,
+  });
+}
+
+export function useSaveStage(id: number) {
+  const takeIn = useTakeIn();
+  return useMutation({
+    mutationFn: (input: UpdateStage) =>
+      callApi(`/stages/${id}`, { method: "PUT", body: input, schema: stageSchema }),
+    onSuccess: takeIn,
+  });
+}
+
+export function useDeleteStage() {
+  const client = useQueryClient();
+  return useMutation({
+    mutationFn: (id: number) => callApi(`/stages/${id}`, { method: "DELETE", schema: null }),
+    onSuccess: (_answer, id) => {
+      client.removeQueries({ queryKey: oneKey(id) });
+      return client.invalidateQueries({ queryKey: stagesQuery.queryKey, exact: true });
+    },
+  });
+}
+
+export function useRestoreStage() {
+  const takeIn = useTakeIn();
+  return useMutation({
+    mutationFn: (id: number) => callApi(`/stages/${id}/restore`, { method: "POST", schema: stageSchema }),
+    onSuccess: takeIn,
+  });
+}
