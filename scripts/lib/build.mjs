@@ -76,6 +76,7 @@ async function buildWeb() {
   await run(process.execPath, [packaged("vite/bin/vite.js"), "build", "--logLevel", "warn"], {
     cwd: root,
     env: { ...process.env, NODE_ENV: "production" },
+    keptLines: 60,
     failure: "The web application could not be built. Vite said last:",
   });
 }

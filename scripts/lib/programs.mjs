@@ -2,6 +2,7 @@ import { spawn } from "node:child_process";
 import { accessSync, constants } from "node:fs";
 import { delimiter, join } from "node:path";
 import { createInterface } from "node:readline";
+import { stripVTControlCharacters } from "node:util";
 import { isEnding, whenEnding } from "./lifetime.mjs";
 import { Trouble } from "./trouble.mjs";
 
@@ -60,7 +61,13 @@ export function launch(
   const reaper = findProgram("setpriv");
   const [file, all] = reaper ? [reaper, ["--pdeathsig", "TERM", "--", command, ...args]] : [command, args];
   const sink = output === "show" ? "inherit" : typeof output === "number" ? output : "pipe";
-  const child = spawn(file, all, { cwd, env, detached: true, stdio: ["ignore", sink, sink] });
+  const plain = sink === "inherit" && process.stdout.isTTY ? {} : { NO_COLOR: "1", FORCE_COLOR: undefined };
+  const child = spawn(file, all, {
+    cwd,
+    env: { ...(env ?? process.env), ...plain },
+    detached: true,
+    stdio: ["ignore", sink, sink],
+  });
 
   /** @type {string[]} */
   const lines = [];
@@ -72,7 +79,8 @@ export function launch(
     if (!stream) continue;
     createInterface({ input: stream }).on("line", (line) => {
       if (typeof output === "function") output(line, name);
-      lines.push(line);
+      // Some programs colour what they say even where nobody sees it.
+      lines.push(stripVTControlCharacters(line));
       if (lines.length > keptLines) lines.shift();
     });
   }

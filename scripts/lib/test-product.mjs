@@ -141,7 +141,6 @@ async function openTestDatabase() {
     // Browser profiles and the like go into the run's folder, and so go away with it.
     TMPDIR: join(folder, "tmp"),
     TEST_DATABASE_URL: databaseUrl(""),
-    ...(process.stdout.isTTY ? {} : { NO_COLOR: "1", FORCE_COLOR: undefined }),
   };
   return { folder, cleared, env, databaseUrl };
 }
