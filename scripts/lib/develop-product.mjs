@@ -1,7 +1,7 @@
 import { installMissing } from "./apt.mjs";
 import { migrate, seed } from "./data.mjs";
 import { readEnvFile } from "./environment.mjs";
-import { runScript } from "./lifetime.mjs";
+import { isEnding, runScript } from "./lifetime.mjs";
 import { installPackages } from "./npm.mjs";
 import { takeFolder } from "./one-at-a-time.mjs";
 import { fillOnce, openDatabase } from "./own-database.mjs";
@@ -72,7 +72,7 @@ async function develop() {
   const title = await Promise.race(
     Object.entries(programs).flatMap(([name, program]) => (program ? [program.exited.then(() => name)] : [])),
   );
-  console.error(`${title} ended by itself.`);
+  if (!isEnding()) console.error(`${title} ended by itself.`);
   return 1;
 }
 
