@@ -99,7 +99,7 @@ function Recent<T>({ title, all, query, empty, children }: RecentProps<T>) {
           <ProblemMessage problem={problemOf(error)} onRetry={refetch} retrying={isFetching} />
         </div>
       ) : data === undefined ? (
-        <SkeletonRows rows={3} />
+        <SkeletonRows rows={3} label={title} />
       ) : data.length === 0 ? (
         empty
       ) : (

@@ -29,11 +29,11 @@ export function SignedInFrame() {
   }
   return (
     <PageFrame top={<TopBar me={me ?? null} />}>
-      {isPending && <SkeletonRows rows={4} />}
+      {isPending && <SkeletonRows rows={4} label="The page is being fetched" />}
       {error && <ProblemMessage problem={problemOf(error)} onRetry={refetch} retrying={isFetching} />}
       {/* Another team's page starts afresh: nothing it held may show. */}
       {me && (
-        <Suspense key={me.team.id} fallback={<SkeletonRows rows={4} />}>
+        <Suspense key={me.team.id} fallback={<SkeletonRows rows={4} label="The page is being fetched" />}>
           <Outlet />
         </Suspense>
       )}

@@ -1,0 +1,32 @@
+import { useQuery } from "@tanstack/react-query";
+import { useMemo } from "react";
+import { useNavigate } from "react-router-dom";
+import type { Brief } from "#shared/schemas/brief";
+import { problemOf } from "../../lib/api";
+import { DataTable } from "../../ui/data-table";
+import { ProblemMessage } from "../../ui/problem-message";
+import { SkeletonRows } from "../../ui/skeleton";
+import { useMediaQuery } from "../../ui/use-media-query";
+import { linkTo, setColumns } from "./fit-columns";
+import { otherSetsQuery } from "./use-ranking";
+
+type OtherSetsProps = { brief: Brief; briefId: number | null; partId: number; scale: number };
+
+/** A part's best resistor sets, ranked among themselves. */
+export function OtherSets({ brief, briefId, partId, scale }: OtherSetsProps) {
+  const { data, error, refetch, isFetching } = useQuery(otherSetsQuery(brief, partId));
+  const navigate = useNavigate();
+  const isNarrow = !useMediaQuery("(width >= 52rem)");
+  const columns = useMemo(() => setColumns(brief, scale, isNarrow), [brief, scale, isNarrow]);
+  if (error) return <ProblemMessage problem={problemOf(error)} onRetry={refetch} retrying={isFetching} />;
+  if (!data) return <SkeletonRows rows={3} label="Ranking this part's resistor sets" />;
+  return (
+    <DataTable
+      label={`Resistor sets of ${data[0]?.part.partNumber ?? "this part"}`}
+      columns={columns}
+      rows={data}
+      rowId={({ r1, r2, rd, rs }) => [r1, r2, rd, rs].join(" ")}
+      onOpen={(fit) => navigate(linkTo(fit, brief, briefId, null))}
+    />
+  );
+}
