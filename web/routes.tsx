@@ -9,12 +9,16 @@ function lazyPage(load: () => Promise<ComponentType>): Pick<RouteObject, "lazy">
   return { lazy: async () => ({ Component: await load() }) };
 }
 
+/** Nothing is drawn until the first page's bundle is there: a flash of an empty frame helps nobody. */
+const nothingYet = <></>;
+
 /** Every address of the product. */
 export function createRouter() {
   return createBrowserRouter([
     {
       element: <SignedInFrame />,
       errorElement: <RouteError />,
+      hydrateFallbackElement: nothingYet,
       children: [
         { path: "/", ...lazyPage(async () => (await import("./features/home/home-page")).HomePage) },
         {
@@ -46,6 +50,7 @@ export function createRouter() {
     {
       element: <Frame />,
       errorElement: <RouteError />,
+      hydrateFallbackElement: nothingYet,
       children: [
         {
           path: "/method",

@@ -116,7 +116,8 @@ export function DataTable<T extends RowData>(props: DataTableProps<T>) {
             aria-label={overflows ? `${label}, scrolls sideways` : undefined}
             // A box that scrolls must be reachable by keyboard; rows that take the focus make it so already.
             tabIndex={overflows && !interactive ? 0 : undefined}
-            className={overflows ? "overflow-x-auto" : undefined}
+            // Positioned, so that what is hidden from sight inside it scrolls with it instead of widening the page.
+            className={overflows ? "relative overflow-x-auto" : undefined}
           >
             <table
               ref={tableRef}

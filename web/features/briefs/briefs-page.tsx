@@ -15,6 +15,7 @@ import { PageTitle } from "../../ui/page-title";
 import { ProblemMessage } from "../../ui/problem-message";
 import { SkeletonRows } from "../../ui/skeleton";
 import { showToast, showUndoToast } from "../../ui/toast";
+import { useMediaQuery } from "../../ui/use-media-query";
 import { useCreateBrief, useDeleteBrief, useRestoreBrief } from "./queries";
 
 /** The team's saved briefs. */
@@ -22,6 +23,7 @@ export function BriefsPage() {
   useDocumentTitle("Briefs");
   const { data, error, refetch, isFetching } = useQuery(briefsQuery);
   const mayWrite = useMay("design:write");
+  const isNarrow = !useMediaQuery("(width >= 52rem)");
   const navigate = useNavigate();
   const newBrief = (
     <Button asChild variant="main">
@@ -43,7 +45,7 @@ export function BriefsPage() {
         ) : (
           <DataTable
             label="Saved briefs"
-            columns={columnsFor(mayWrite)}
+            columns={columnsFor(mayWrite, isNarrow)}
             rows={data}
             rowId={(brief) => String(brief.id)}
             onOpen={(brief) => navigate(`/briefs/${brief.id}`)}
@@ -54,7 +56,13 @@ export function BriefsPage() {
   );
 }
 
-function columnsFor(mayWrite: boolean): DataTableColumn<SavedBrief>[] {
+function columnsFor(mayWrite: boolean, isNarrow: boolean): DataTableColumn<SavedBrief>[] {
+  const conditions: DataTableColumn<SavedBrief> = {
+    id: "conditions",
+    header: "conditions",
+    hideable: true,
+    cell: ({ brief }) => <span className="text-quiet text-sm">{conditionsInWords(brief).join(" · ")}</span>,
+  };
   return [
     {
       id: "name",
@@ -67,12 +75,7 @@ function columnsFor(mayWrite: boolean): DataTableColumn<SavedBrief>[] {
         </>
       ),
     },
-    {
-      id: "conditions",
-      header: "conditions",
-      hideable: true,
-      cell: ({ brief }) => <span className="text-quiet text-sm">{conditionsInWords(brief).join(" · ")}</span>,
-    },
+    ...(isNarrow ? [] : [conditions]),
     {
       id: "version",
       header: "version",

@@ -59,8 +59,8 @@ export function SavedBriefTitle({ saved, current, validate }: SavedBriefTitlePro
         actions={
           mayWrite && (
             <>
-              <Button variant="quiet" onClick={() => setRenaming(true)}>
-                Rename
+              <Button variant="link" onClick={() => setRenaming(true)}>
+                rename
               </Button>
               {isDirty && (
                 <Button busy={save.isPending} onClick={saveChanges}>

@@ -33,7 +33,7 @@ export function TopBar({ me }: { me: Me | null }) {
           {me && <TopLink to="/stages">Stages</TopLink>}
           <TopLink to="/method">Method</TopLink>
         </nav>
-        <div className="ml-auto">
+        <div className="-mr-4 ml-auto">
           {me ? (
             <PersonMenu me={me} />
           ) : (
@@ -69,8 +69,10 @@ function PersonMenu({ me }: { me: Me }) {
       align="end"
       trigger={
         <Button variant="quiet" aria-label={`${me.user.name}, ${me.team.name}: menu`}>
-          <span className="hidden sm:inline">{me.team.name} · </span>
-          {me.user.name}
+          <span>
+            <span className="hidden sm:inline">{me.team.name} · </span>
+            {me.user.name}
+          </span>
         </Button>
       }
     >
