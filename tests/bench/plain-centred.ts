@@ -55,7 +55,7 @@ export function runPlainLoop(problem: PlainProblem, devices: readonly PlainDevic
             }
             const up = id * rl;
             const down = (k * v * v * (1 + lambda * v) - id) * rl;
-            const swing = up < down ? up : down;
+            const swing = Math.min(up, down);
             const bucket = Math.floor((100 * Math.abs(up - down)) / (up + down));
             if (bucket < bestBucket || (bucket === bestBucket && swing > bestSwing)) {
               bestBucket = bucket;

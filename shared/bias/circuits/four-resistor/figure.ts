@@ -47,7 +47,8 @@ export function loadLineFigure(
       ]
     : null;
   const spread = outline(buildCorners(part, brief, resistors));
-  const top = Math.max(dcLine[0].id, acLine?.[0].id ?? 0);
+  // Half as high again, so that the edge leaves the drawing at its frame and not in it.
+  const top = 1.5 * Math.max(dcLine[0].id, acLine?.[0].id ?? 0);
   return {
     polarity: part.polarity,
     vdd: values.vdd,
