@@ -66,7 +66,6 @@ export const biasSchema = z.object({
 
 export type Device = z.infer<typeof deviceSchema>;
 export type StageValues = z.infer<typeof stageValuesSchema>;
-export type SolveRequest = z.infer<typeof solveRequestSchema>;
 export type Region = (typeof REGIONS)[number];
 export type Swing = z.infer<typeof swingSchema>;
 export type Distortion = z.infer<typeof distortionSchema>;

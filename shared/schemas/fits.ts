@@ -104,7 +104,6 @@ export const fitsEventSchema = z.union([
 
 export type FitsRequest = z.infer<typeof fitsRequestSchema>;
 export type Fit = z.infer<typeof fitSchema>;
-export type FitPart = z.infer<typeof fitPartSchema>;
 export type FitsResponse = z.infer<typeof fitsResponseSchema>;
 export type FitsEvent = z.infer<typeof fitsEventSchema>;
 export type PassedOverReason = (typeof PASSED_OVER_REASONS)[number];
