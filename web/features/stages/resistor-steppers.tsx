@@ -1,0 +1,51 @@
+import type { Brief } from "#shared/schemas/brief";
+import type { Resistors } from "#shared/schemas/stage";
+import { stepInSeries } from "#shared/values/e-series";
+import { formatResistance } from "#shared/values/engineering";
+import { usePreferences } from "../../lib/preferences";
+import { Stepper } from "../../ui/stepper";
+
+type ResistorName = keyof Resistors;
+
+type ResistorSteppersProps = {
+  brief: Brief;
+  resistors: Resistors;
+  onChange: (resistors: Resistors) => void;
+};
+
+const RANGES = { r1: "divider", r2: "divider", rd: "drain", rs: "source" } as const;
+
+/** Each resistor with its neighbours in its own series, one step away. */
+export function ResistorSteppers({ brief, resistors, onChange }: ResistorSteppersProps) {
+  const { resistances } = usePreferences();
+  const show = (ohms: number) => formatResistance(ohms, resistances);
+  const names: ResistorName[] = resistors.rs > 0 ? ["r1", "r2", "rd", "rs"] : ["r1", "r2", "rd"];
+  const series = [...new Set(names.map((name) => brief.resistors[RANGES[name]].series))];
+  return (
+    <section aria-labelledby="resistors-title">
+      <h2 id="resistors-title" className="pb-1 font-semibold text-sm">
+        Resistors, one step in {series.join(" and ")}
+      </h2>
+      {names.map((name) => {
+        const { series: own } = brief.resistors[RANGES[name]];
+        const value = resistors[name];
+        const lower = stepInSeries(own, value, -1);
+        const higher = stepInSeries(own, value, 1);
+        return (
+          <Stepper
+            key={name}
+            label={name.toUpperCase()}
+            value={show(value)}
+            lower={lower >= LEAST ? show(lower) : null}
+            higher={higher <= MOST ? show(higher) : null}
+            onStep={(direction) => onChange({ ...resistors, [name]: direction === "lower" ? lower : higher })}
+          />
+        );
+      })}
+    </section>
+  );
+}
+
+/** The values that a stage may have, ohms. */
+const LEAST = 0.1;
+const MOST = 100e6;

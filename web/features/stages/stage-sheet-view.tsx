@@ -1,0 +1,195 @@
+import { type ReactNode, useMemo, useState } from "react";
+import { loadLineFigure } from "#shared/bias/circuits/four-resistor/figure";
+import { describeStage, distortionPeak, type StageSheet } from "#shared/bias/stage-sheet";
+import { cautionsFor } from "#shared/cautions";
+import type { Brief } from "#shared/schemas/brief";
+import type { Part } from "#shared/schemas/part";
+import type { Resistors } from "#shared/schemas/stage";
+import { formatPercent, formatQuantity } from "#shared/values/engineering";
+import { BalanceBar } from "../../figures/balance-bar";
+import { LoadLineFigure } from "../../figures/load-line-figure";
+import { LoadLineTable } from "../../figures/load-line-table";
+import { CautionBlock, MarginNote } from "../../ui/margin-note";
+import { Slider } from "../../ui/slider";
+import { missedConditions } from "./missed-conditions";
+import { ResistorSteppers } from "./resistor-steppers";
+import { StageFigures } from "./stage-figures";
+
+type StageSheetViewProps = {
+  part: Part;
+  brief: Brief;
+  resistors: Resistors;
+  onChange: (resistors: Resistors) => void;
+  /** What stands under the resistors: that values were changed, and what to do about it. */
+  underResistors?: ReactNode;
+  /** What stands under the figure: the note. */
+  underFigure?: ReactNode;
+};
+
+const exact = { exact: true } as const;
+/** The drive goes past the symmetric swing, so that clipping can be seen. */
+const MOST_DRIVE = 1.3;
+const ROOM_TEMPERATURE = 25;
+
+/** A stage on its load line, with every figure; each follows the values at once, worked out here. */
+export function StageSheetView(props: StageSheetViewProps) {
+  const { part, brief, resistors, onChange, underResistors, underFigure } = props;
+  const [celsius, setCelsius] = useState(() => clamp(ROOM_TEMPERATURE, brief.ambient.min, brief.ambient.max));
+  const sheet = useMemo(
+    () => describeStage(part, brief, resistors, celsius),
+    [part, brief, resistors, celsius],
+  );
+  const cautions = useMemo(() => cautionsFor(part, brief, resistors), [part, brief, resistors]);
+  const missed = missedConditions(part, brief, sheet);
+  return (
+    <div className="mt-6 grid gap-x-14 gap-y-10 lg:grid-cols-[minmax(0,1fr)_25rem]">
+      <div className="min-w-0">
+        <DrivenFigure part={part} brief={brief} resistors={resistors} sheet={sheet} celsius={celsius} />
+        {underFigure}
+      </div>
+      <div className="flex min-w-0 flex-col gap-7">
+        <div>
+          {sheet.bias.swing && (
+            <BalanceBar
+              size="sheet"
+              towardOhmic={sheet.bias.swing.towardOhmic}
+              towardCutoff={sheet.bias.swing.towardCutoff}
+              assured={null}
+              scale={Math.max(sheet.bias.swing.towardOhmic, sheet.bias.swing.towardCutoff)}
+            />
+          )}
+          <p aria-live="polite" className="mt-1 leading-6.5">
+            <Verdict sheet={sheet} />
+          </p>
+        </div>
+        {missed.length > 0 && (
+          <div className="flex flex-col gap-3">
+            {missed.map((words) => (
+              <MarginNote key={words} lead="Misses the brief.">
+                {words}
+              </MarginNote>
+            ))}
+          </div>
+        )}
+        <div>
+          <ResistorSteppers brief={brief} resistors={resistors} onChange={onChange} />
+          {underResistors}
+        </div>
+        <section aria-labelledby="figures-title">
+          <h2 id="figures-title" className="pb-1 font-semibold text-sm">
+            At {formatQuantity(celsius, "°C", exact)}
+          </h2>
+          {brief.ambient.max > brief.ambient.min && (
+            <div data-no-print="" className="pb-2">
+              <Slider
+                label="Ambient"
+                value={celsius}
+                onChange={setCelsius}
+                min={brief.ambient.min}
+                max={brief.ambient.max}
+                format={(value) => formatQuantity(value, "°C", exact)}
+              />
+            </div>
+          )}
+          <StageFigures sheet={sheet} brief={brief} />
+        </section>
+        <section aria-label="Cautions" className="flex flex-col gap-3">
+          {cautions.map(({ code, message }) => (
+            <CautionBlock key={code}>{message}</CautionBlock>
+          ))}
+        </section>
+      </div>
+    </div>
+  );
+}
+
+/** What the stage does and what limits it, in a sentence. */
+function Verdict({ sheet }: { sheet: StageSheet }) {
+  const { region, swing, centringError } = sheet.bias;
+  if (region === "cutoff") return <>The device is off: it amplifies nothing.</>;
+  if (!swing || centringError === null) {
+    return (
+      <>The device is in the ohmic region (non-saturation): it amplifies little and can't swing evenly.</>
+    );
+  }
+  const limit =
+    centringError < 0.005
+      ? "Neither side runs out first."
+      : swing.towardOhmic < swing.towardCutoff
+        ? "Room toward the ohmic region runs out first."
+        : "Room toward cutoff runs out first.";
+  return (
+    <>
+      <strong>{formatQuantity(swing.symmetric, "V")} peak</strong> both ways,{" "}
+      {formatPercent(centringError, 1)} off centre. {limit}
+    </>
+  );
+}
+
+type DrivenFigureProps = {
+  part: Part;
+  brief: Brief;
+  resistors: Resistors;
+  sheet: StageSheet;
+  celsius: number;
+};
+
+/** The load-line figure with the drive of its wave, and the same as a table. */
+function DrivenFigure({ part, brief, resistors, sheet, celsius }: DrivenFigureProps) {
+  const symmetric = sheet.bias.swing?.symmetric ?? 0;
+  const [drive, setDrive] = useState<number | null>(null);
+  const [asTable, setAsTable] = useState(false);
+  const most = MOST_DRIVE * symmetric;
+  const outputPeak = clamp(drive ?? (distortionPeak(brief) || symmetric), 0, most);
+  const data = useMemo(
+    () => loadLineFigure(part, brief, resistors, celsius, outputPeak),
+    [part, brief, resistors, celsius, outputPeak],
+  );
+  const rail = `${formatQuantity(brief.rail.volts, "V", exact)} ± ${formatQuantity(brief.rail.tolerance, "%", exact)}`;
+  return (
+    <>
+      <LoadLineFigure
+        data={data}
+        driveControl={
+          most > 0 && (
+            <div className="max-w-80">
+              <Slider
+                label="Drive, peak at the output"
+                value={outputPeak}
+                onChange={setDrive}
+                min={0}
+                max={most}
+                step={most / 100}
+                format={(value) => formatQuantity(value, "V")}
+              />
+            </div>
+          )
+        }
+        caption={
+          <>
+            Hatched: where the Q-point may land for any part inside the datasheet range on a rail of {rail},
+            over resistor tolerance and temperature.{" "}
+            <button
+              type="button"
+              data-no-print=""
+              aria-expanded={asTable}
+              onClick={() => setAsTable(!asTable)}
+              className="underline underline-offset-3 hover:text-ink"
+            >
+              {asTable ? "Hide the table" : "As a table"}
+            </button>
+          </>
+        }
+      />
+      {asTable && (
+        <div className="mt-4">
+          <LoadLineTable data={data} />
+        </div>
+      )}
+    </>
+  );
+}
+
+function clamp(value: number, low: number, high: number): number {
+  return Math.min(high, Math.max(low, value));
+}

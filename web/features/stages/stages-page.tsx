@@ -1,0 +1,154 @@
+import { useQuery } from "@tanstack/react-query";
+import { useMemo } from "react";
+import { Link, useNavigate } from "react-router-dom";
+import { figureStage, type StageFigures } from "#shared/bias/stage-sheet";
+import type { Stage } from "#shared/schemas/stage";
+import { BalanceBar } from "../../figures/balance-bar";
+import { problemOf } from "../../lib/api";
+import { formatDay } from "../../lib/dates";
+import { stagesQuery } from "../../lib/lists";
+import { useDocumentTitle } from "../../lib/use-document-title";
+import { Button } from "../../ui/button";
+import { DataTable } from "../../ui/data-table";
+import type { DataTableColumn } from "../../ui/data-table-model";
+import { EmptyState } from "../../ui/empty-state";
+import { PageTitle } from "../../ui/page-title";
+import { ProblemMessage } from "../../ui/problem-message";
+import { SkeletonRows } from "../../ui/skeleton";
+import { useMediaQuery } from "../../ui/use-media-query";
+import { Value } from "../../ui/value";
+
+type Row = { stage: Stage; figures: StageFigures };
+
+/** The team's kept stages. */
+export function StagesPage() {
+  useDocumentTitle("Stages");
+  const { data, error, refetch, isFetching } = useQuery(stagesQuery);
+  const navigate = useNavigate();
+  const isNarrow = !useMediaQuery("(width >= 52rem)");
+  const rows = useMemo(
+    () => data?.map((stage) => ({ stage, figures: figureStage(stage.part, stage.brief, stage.resistors) })),
+    [data],
+  );
+  return (
+    <>
+      <PageTitle>Stages</PageTitle>
+      <div className="mt-6">
+        {error ? (
+          <ProblemMessage problem={problemOf(error)} onRetry={refetch} retrying={isFetching} />
+        ) : rows === undefined ? (
+          <SkeletonRows label="The stages are being fetched" />
+        ) : rows.length === 0 ? (
+          <EmptyState
+            title="No stage kept yet."
+            action={
+              <Button asChild variant="main">
+                <Link to="/briefs/new">Write a brief</Link>
+              </Button>
+            }
+          >
+            Rank a brief, open a fit and keep it: its values are frozen here, with its load line.
+          </EmptyState>
+        ) : (
+          <DataTable
+            label="Kept stages"
+            columns={columnsFor(isNarrow)}
+            rows={rows}
+            rowId={({ stage }) => String(stage.id)}
+            onOpen={({ stage }) => navigate(`/stages/${stage.id}`)}
+          />
+        )}
+      </div>
+    </>
+  );
+}
+
+function columnsFor(isNarrow: boolean): DataTableColumn<Row>[] {
+  const name: DataTableColumn<Row> = {
+    id: "name",
+    header: "stage",
+    sortValue: ({ stage }) => stage.name,
+    cell: ({ stage }) => (
+      <>
+        <span className="block font-semibold leading-5">{stage.name}</span>
+        <span className="block text-quiet text-xs">
+          {stage.part.partNumber} · {stage.part.maker} · {stage.part.package}
+        </span>
+      </>
+    ),
+  };
+  const balance: DataTableColumn<Row> = {
+    id: "balance",
+    header: (
+      <span>
+        <span className="text-ohmic">ohmic</span> ← room each way →{" "}
+        <span className="text-cutoff-ink">cutoff</span>
+      </span>
+    ),
+    name: "Room each way",
+    className: "min-w-56",
+    // Stages differ in their rails, so each bar has its own scale: what compares is how centred they are.
+    cell: ({ figures: { bias } }) =>
+      bias.swing && (
+        <BalanceBar
+          towardOhmic={bias.swing.towardOhmic}
+          towardCutoff={bias.swing.towardCutoff}
+          assured={null}
+          scale={Math.max(bias.swing.towardOhmic, bias.swing.towardCutoff)}
+        />
+      ),
+  };
+  const resistors = (["r1", "r2", "rd", "rs"] as const).map(
+    (id): DataTableColumn<Row> => ({
+      id,
+      header: id.toUpperCase(),
+      numeric: true,
+      hideable: true,
+      sortValue: ({ stage }) => stage.resistors[id],
+      cell: ({ stage }) => (stage.resistors[id] > 0 ? <Value number={stage.resistors[id]} unit="Ω" /> : "—"),
+    }),
+  );
+  const figures: DataTableColumn<Row>[] = [
+    {
+      id: "centring",
+      header: "off centre",
+      numeric: true,
+      sortValue: ({ figures: { bias } }) => bias.centringError,
+      cell: ({ figures: { bias } }) => <Value number={bias.centringError} unit="%" decimals={1} />,
+    },
+    {
+      id: "swing",
+      header: "swing",
+      numeric: true,
+      sortValue: ({ figures: { bias } }) => bias.swing?.symmetric,
+      cell: ({ figures: { bias } }) => <Value number={bias.swing?.symmetric} unit="V" />,
+    },
+    {
+      id: "rail",
+      header: "rail",
+      numeric: true,
+      sortValue: ({ stage }) => stage.brief.rail.volts,
+      cell: ({ stage }) => <Value number={stage.brief.rail.volts} unit="V" exact />,
+    },
+    {
+      id: "gain",
+      header: "gain",
+      numeric: true,
+      hideable: true,
+      sortValue: ({ figures: { bias } }) => Math.abs(bias.gain),
+      cell: ({ figures: { bias } }) => <Value number={bias.gain} unit="" />,
+    },
+    {
+      id: "changed",
+      header: "changed",
+      sortValue: ({ stage }) => stage.updatedAt,
+      cell: ({ stage }) => (
+        <>
+          <span className="block whitespace-nowrap">{formatDay(stage.updatedAt)}</span>
+          <span className="block whitespace-nowrap text-quiet text-sm">{stage.updatedBy.name}</span>
+        </>
+      ),
+    },
+  ];
+  return isNarrow ? [name, balance, ...figures, ...resistors] : [name, ...resistors, balance, ...figures];
+}
