@@ -55,7 +55,7 @@ async function insertTeam(
   return teamId;
 }
 
-/** A brief and the stage kept from it, which is what the ranking puts first on the day. */
+/** A brief and the stage kept from it: the first fit whose overdrive is high enough to trust the square law. */
 async function insertStory(
   db: Transaction,
   teamId: number,
@@ -68,8 +68,8 @@ async function insertStory(
   if (!story.stage) return;
   const parts = await selectAllParts(db, teamId);
   const supply = { rating: LARGEST_RATING, stocked: null };
-  const { fits } = await rankFits({ brief, objective: "centred", distinct: "part", limit: 1 }, parts, supply);
-  const [best] = fits;
+  const { fits } = await rankFits({ brief, objective: "centred", distinct: "part", limit: 5000 }, parts, supply);
+  const best = fits.find(({ cautions }) => cautions.every(({ code }) => code !== "low-overdrive"));
   const part = parts.find(({ id }) => id === best?.part.id);
   if (!best || !part) throw new Error(`Nothing in the catalog fits the demo brief "${story.name}"`);
   const { r1, r2, rd, rs } = best;

@@ -33,7 +33,7 @@ type StoryBrief = {
   stage: { name: string; note: string } | null;
 };
 
-/** The demo's briefs, and the stage that the designer kept from each: its best fit. */
+/** The demo's briefs, and the stage that the designer kept from each. */
 export const BRIEFS: readonly StoryBrief[] = [
   {
     team: "Tidewater Acoustics",
@@ -55,8 +55,8 @@ export const BRIEFS: readonly StoryBrief[] = [
       buildQuantity: 500,
     },
     stage: {
-      name: "Hydrophone first stage, fit 1",
-      note: "Kept for board A. The drop across RS holds the current over the threshold spread.",
+      name: "Hydrophone first stage, board A",
+      note: "The drop across RS holds the current over the threshold spread.",
     },
   },
   {

@@ -8,7 +8,7 @@ const PAGES = [
   { path: "/briefs/new", ready: "Rank the fits" },
   { path: "/briefs/1", ready: "combinations ranked in" },
   { path: "/stages", ready: "Line driver output" },
-  { path: "/stages/1", ready: "Hydrophone first stage, fit 1" },
+  { path: "/stages/1", ready: "Hydrophone first stage, board A" },
   { path: "/method", ready: "Centring error" },
   { path: "/nowhere", ready: "There is no page at this address." },
 ] as const;
