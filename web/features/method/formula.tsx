@@ -1,5 +1,4 @@
 import { createElement, Fragment, type ReactNode } from "react";
-import { classNames } from "../../ui/class-names";
 import { type FormulaPart, formulaInWords, parseFormula } from "./parse-formula";
 
 type FormulaProps = {
@@ -12,11 +11,7 @@ type FormulaProps = {
 export function Formula({ source, className }: FormulaProps) {
   const parts = parseFormula(source);
   return (
-    <span
-      role="math"
-      aria-label={formulaInWords(parts)}
-      className={classNames("whitespace-nowrap", className)}
-    >
+    <span role="math" aria-label={formulaInWords(parts)} className={className}>
       {inARow(parts.map(renderPart))}
     </span>
   );

@@ -2,6 +2,7 @@ import "@fontsource-variable/instrument-sans/wght-italic.css";
 import { type ReactNode, useEffect } from "react";
 import { useLocation } from "react-router-dom";
 import { useDocumentTitle } from "../../lib/use-document-title";
+import { MarginNote } from "../../ui/margin-note";
 import { PageTitle } from "../../ui/page-title";
 import { Formula, WithFormulas } from "./formula";
 import type { MethodEntry, MethodSection } from "./section";
@@ -34,7 +35,7 @@ export function MethodPage() {
         Every formula behind a figure, with its source and its limits. The server's ranking and the sheet in
         your browser run the same code.
       </p>
-      <div className="mt-8 grid gap-x-16 gap-y-8 lg:grid-cols-[13rem_minmax(0,1fr)] print:block">
+      <div className="mt-8 grid gap-x-16 gap-y-8 grid-cols-[minmax(0,1fr)] lg:grid-cols-[13rem_minmax(0,1fr)] print:block">
         <Contents />
         <div className="flex flex-col gap-14">
           {SECTIONS.map((section) => (
@@ -88,7 +89,10 @@ export function MethodPage() {
 
 function Contents() {
   return (
-    <nav aria-label="Contents" className="self-start text-sm lg:sticky lg:top-6">
+    <nav
+      aria-label="Contents"
+      className="self-start text-sm lg:sticky lg:top-6 lg:max-h-[calc(100dvh-3rem)] lg:overflow-y-auto"
+    >
       <ol className="flex flex-col gap-y-3 border-rule border-t pt-3">
         {SECTIONS.map(({ id, title, entries }) => (
           <li key={id}>
@@ -144,27 +148,31 @@ function Entry({ entry }: { entry: MethodEntry }) {
       tabIndex={-1}
       aria-labelledby={`${id}-title`}
       data-keep-together=""
-      className="-mx-3 scroll-mt-4 rounded-sm px-3 py-1.5 outline-none target:bg-panel"
+      className="-mx-3 grid scroll-mt-4 gap-x-10 gap-y-3 rounded-sm px-3 py-2 outline-none focus:bg-panel xl:grid-cols-[minmax(0,42rem)_minmax(0,1fr)]"
     >
-      <h3 id={`${id}-title`} className="text-lg">
-        {title}
-      </h3>
-      {formulas.length > 0 && (
-        <div className="my-2.5 flex flex-col gap-2.5 overflow-x-auto border-rule border-l-2 py-1 pl-5 text-lg">
-          {formulas.map((formula) => (
-            <Formula key={formula} source={formula} className="whitespace-nowrap leading-loose" />
-          ))}
-        </div>
-      )}
-      <Words>{words}</Words>
-      <p className="mt-1.5 max-w-[42rem] text-quiet text-sm">
-        <span className="font-medium">Source.</span> <WithFormulas>{source}</WithFormulas>
-      </p>
-      {limits && (
-        <p className="mt-1 max-w-[42rem] text-quiet text-sm">
-          <span className="font-medium">Limits.</span> <WithFormulas>{limits}</WithFormulas>
-        </p>
-      )}
+      <div>
+        <h3 id={`${id}-title`} className="text-lg">
+          {title}
+        </h3>
+        {formulas.length > 0 && (
+          <div className="my-2.5 flex flex-col gap-2.5 py-1 pl-5 text-lg">
+            {formulas.map((formula) => (
+              <Formula key={formula} source={formula} className="leading-loose" />
+            ))}
+          </div>
+        )}
+        <Words>{words}</Words>
+      </div>
+      <div className="flex max-w-[42rem] flex-col gap-3 text-quiet xl:pt-1">
+        <MarginNote lead="Source.">
+          <WithFormulas>{source}</WithFormulas>
+        </MarginNote>
+        {limits && (
+          <MarginNote lead="Limits.">
+            <WithFormulas>{limits}</WithFormulas>
+          </MarginNote>
+        )}
+      </div>
     </article>
   );
 }

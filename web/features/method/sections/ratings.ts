@@ -14,7 +14,7 @@ export const FREQUENCY: MethodSection = {
         "R_i = R_{sig} + R_{in},  R_o = R_{out} + R_L,  R_x = R_S || {r_o + r_L}/{1 + g_m r_o}",
       ],
       words:
-        "The bypass capacitor works against the least resistance, so it is the largest: it sets the corner, and the coupling capacitors stay a decade below. Without a bypass capacitor, two coupling capacitors share the corner: each is set to `f √{√{2} − 1}` = 0.64 `f`. Round up to a preferred value.",
+        "The bypass capacitor works against the least resistance, so it is the largest: it sets the corner, and the coupling capacitors stay a decade below. Without a bypass capacitor, two coupling capacitors share the corner: each is set to `f (√{2} − 1)^{1/2}`, or 0.64 `f`. Round up to a preferred value.",
       source:
         "The product of the three responses is solved for the corner itself; the share is common practice.",
       limits:

@@ -50,7 +50,7 @@ export const SIGNAL: MethodSection = {
     {
       id: "distortion",
       title: "Second and third harmonic",
-      formulas: ["h_n = {a_n}/{a_1},  a_n = {2}/{π} ∫ v(θ) cos nθ dθ"],
+      formulas: ["h_n = {a_n}/{a_1},  a_n = {2}/{π} ∫ v(θ) cos(n θ) d θ"],
       words:
         "For a sine at the gate the drain current is solved point by point along the a.c. line, with the whole device law, and the Fourier coefficients of the output are taken: 129 points over half a period, which is all there is to a curve without memory. The peak is the brief's output peak, or its swing.",
       source:
