@@ -7,7 +7,9 @@ export default defineConfig({
   retries: 0,
   workers: 2,
   forbidOnly: true,
-  timeout: 60_000,
+  timeout: 90_000,
+  // Two cores run browser, server and search at once.
+  expect: { timeout: 20_000 },
   globalTimeout: 20 * 60_000,
   // `npm test` counts from the JSON report; started by hand, there is none.
   reporter: process.env.PLAYWRIGHT_JSON_OUTPUT_FILE ? [["list"], ["json"]] : [["list"]],

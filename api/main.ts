@@ -6,7 +6,7 @@ import { readEnvironment } from "./env";
 import { refuseDemoSecrets } from "./features/identity/demo";
 import { Backoff } from "./http/backoff";
 import { createSessions } from "./http/session";
-import { closePool } from "./ranking/pool";
+import { closePool, startPool } from "./ranking/pool";
 
 const HOST = "127.0.0.1";
 const WEB_FOLDER = "dist/web";
@@ -29,6 +29,7 @@ const app = createApp(
   },
   environment.production ? WEB_FOLDER : undefined,
 );
+startPool();
 const server = createServer(app);
 server.listen(environment.port, HOST, () => log.info(`listening on http://${HOST}:${environment.port}`));
 

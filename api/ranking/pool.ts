@@ -10,6 +10,11 @@ const fromSource = import.meta.url.endsWith(".ts");
 
 let pool: Piscina<RankingTask, RankingOutcome> | null = null;
 
+/** Starts the threads, so that the first search doesn't wait for them. */
+export function startPool(): void {
+  threads();
+}
+
 function threads(): Piscina<RankingTask, RankingOutcome> {
   pool ??= new Piscina({
     filename: new URL(fromSource ? "./worker.ts" : "./ranking/worker.js", import.meta.url).href,

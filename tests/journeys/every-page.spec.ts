@@ -13,32 +13,38 @@ const PAGES = [
   { path: "/nowhere", ready: "There is no page at this address." },
 ] as const;
 
-for (const scheme of ["light", "dark"] as const) {
-  for (const width of [1440, 390, 360]) {
-    test(`every page is accessible and fits ${width} px, ${scheme}`, async ({ browser }) => {
-      const context = await browser.newContext({ viewport: { width, height: 900 }, colorScheme: scheme });
-      const page = await context.newPage();
-      const complaints: string[] = [];
-      page.on("console", (message) => {
-        // The content policy speaks through the console, and so does React.
-        if (message.type() === "error" && !message.text().includes("404")) complaints.push(message.text());
-      });
-      page.on("pageerror", (error) => complaints.push(String(error)));
-      await signIn(page, "designer@tidewater.example");
-      for (const { path, ready } of PAGES) {
-        await page.goto(path);
-        await expect(page.getByText(ready).first()).toBeVisible();
-        const overflow = await page.evaluate(() => document.documentElement.scrollWidth - window.innerWidth);
-        expect(overflow, `${path} is wider than the window`).toBeLessThanOrEqual(0);
-        const { violations } = await new AxeBuilder({ page })
-          .withTags(["wcag2a", "wcag2aa", "wcag21a", "wcag21aa", "wcag22aa"])
-          .analyze();
-        expect(violations.map(({ id, nodes }) => `${path} ${id}: ${nodes[0]?.html}`)).toEqual([]);
-      }
-      expect(complaints.filter((text) => !text.includes("401"))).toEqual([]);
-      await context.close();
+const VIEWS = [
+  { width: 1440, scheme: "light" },
+  { width: 1440, scheme: "dark" },
+  { width: 390, scheme: "light" },
+  { width: 360, scheme: "dark" },
+] as const;
+
+for (const { width, scheme } of VIEWS) {
+  test(`every page is accessible and fits ${width} px, ${scheme}`, async ({ browser }) => {
+    const context = await browser.newContext({ viewport: { width, height: 900 }, colorScheme: scheme });
+    const page = await context.newPage();
+    const complaints: string[] = [];
+    // The content policy speaks through the console, and so does React; being signed out or lost is no fault here.
+    page.on("console", (message) => {
+      if (message.type() === "error" && !/status of 40[14]/.test(message.text()))
+        complaints.push(message.text());
     });
-  }
+    page.on("pageerror", (error) => complaints.push(String(error)));
+    await signIn(page, "designer@tidewater.example");
+    for (const { path, ready } of PAGES) {
+      await page.goto(path);
+      await expect(page.getByText(ready).filter({ visible: true }).first()).toBeVisible();
+      const overflow = await page.evaluate(() => document.documentElement.scrollWidth - window.innerWidth);
+      expect(overflow, `${path} is wider than the window`).toBeLessThanOrEqual(0);
+      const { violations } = await new AxeBuilder({ page })
+        .withTags(["wcag2a", "wcag2aa", "wcag21a", "wcag21aa", "wcag22aa"])
+        .analyze();
+      expect(violations.map(({ id, nodes }) => `${path} ${id}: ${nodes[0]?.html}`)).toEqual([]);
+    }
+    expect(complaints).toEqual([]);
+    await context.close();
+  });
 }
 
 test("signing in returns to the page asked for, and never to another site", async ({ page }) => {
