@@ -67,6 +67,8 @@ export function createApp(surroundings: Surroundings, webFolder?: string): Expre
         useDefaults: false,
         directives: {
           defaultSrc: ["'self'"],
+          scriptSrc: ["'self'"],
+          styleSrc: ["'self'"],
           imgSrc: ["'self'", "data:"],
           objectSrc: ["'none'"],
           baseUri: ["'none'"],
