@@ -17,10 +17,17 @@ export const demoQuery = queryOptions({
   staleTime: Number.POSITIVE_INFINITY,
 });
 
+/** What the sign-in page itself shows. */
+const KEPT_AT_SIGN_IN = new Set<unknown>([meQuery.queryKey[0], demoQuery.queryKey[0]]);
+
 export function useSignIn() {
   const client = useQueryClient();
   return useMutation({
     mutationFn: (input: SignIn) => callApi("/auth/sign-in", { method: "POST", body: input, schema: null }),
-    onSuccess: () => client.fetchQuery({ ...meQuery, staleTime: 0 }),
+    onSuccess: () => {
+      // Whoever was signed in before may have been somebody else: nothing of theirs stays.
+      client.removeQueries({ predicate: ({ queryKey }) => !KEPT_AT_SIGN_IN.has(queryKey[0]) });
+      return client.fetchQuery({ ...meQuery, staleTime: 0 });
+    },
   });
 }
