@@ -59,7 +59,7 @@ function PageFrame({ top, children }: { top: ReactNode; children: ReactNode }) {
         ref={main}
         tabIndex={-1}
         aria-busy={navigation.state === "loading" || undefined}
-        className="page pt-7 pb-20 outline-none"
+        className="page pt-7 pb-20 outline-none print:p-0"
       >
         {children}
       </main>

@@ -98,7 +98,7 @@ function KeptStage({ stage }: { stage: Stage }) {
           />
         }
         underFigure={
-          <div className="mt-8 max-w-prose">
+          <div className="max-w-prose">
             <MarginNote lead={stage.note ? "Note." : undefined}>
               {stage.note && <span className="whitespace-pre-line">{stage.note} </span>}
               <span className="text-quiet">

@@ -42,12 +42,12 @@ export function StageSheetView(props: StageSheetViewProps) {
   const cautions = useMemo(() => cautionsFor(part, brief, resistors), [part, brief, resistors]);
   const missed = missedConditions(part, brief, sheet);
   return (
-    <div className="mt-6 grid gap-x-14 gap-y-10 lg:grid-cols-[minmax(0,1fr)_25rem]">
+    // On paper the two columns stay, shrunk so that a sheet is one page.
+    <div className="mt-6 grid grid-cols-[minmax(0,1fr)] gap-x-14 gap-y-9 lg:grid-cols-[minmax(0,1fr)_25rem] lg:grid-rows-[auto_1fr] print:grid-cols-[minmax(0,1fr)_22rem] print:grid-rows-[auto_1fr] print:gap-x-8 print:[zoom:0.8]">
       <div className="min-w-0">
         <DrivenFigure part={part} brief={brief} resistors={resistors} sheet={sheet} celsius={celsius} />
-        {underFigure}
       </div>
-      <div className="flex min-w-0 flex-col gap-7">
+      <div className="flex min-w-0 flex-col gap-7 lg:row-span-2 print:row-span-2">
         <div>
           {sheet.bias.swing && (
             <BalanceBar
@@ -76,9 +76,14 @@ export function StageSheetView(props: StageSheetViewProps) {
           {underResistors}
         </div>
         <section aria-labelledby="figures-title">
-          <h2 id="figures-title" className="pb-1 font-semibold text-sm">
-            At {formatQuantity(celsius, "°C", exact)}
-          </h2>
+          <div className="flex items-baseline justify-between gap-4 pb-1 text-sm">
+            <h2 id="figures-title" className="font-semibold">
+              At {formatQuantity(celsius, "°C", exact)}
+            </h2>
+            <span data-no-print="" className="text-quiet text-xs">
+              each name leads to its formula
+            </span>
+          </div>
           {brief.ambient.max > brief.ambient.min && (
             <div data-no-print="" className="pb-2">
               <Slider
@@ -93,11 +98,14 @@ export function StageSheetView(props: StageSheetViewProps) {
           )}
           <StageFigures sheet={sheet} brief={brief} />
         </section>
-        <section aria-label="Cautions" className="flex flex-col gap-3">
+      </div>
+      <div className="flex min-w-0 flex-col gap-7">
+        <section aria-label="Cautions" className="grid items-start gap-3 xl:grid-cols-2">
           {cautions.map(({ code, message }) => (
             <CautionBlock key={code}>{message}</CautionBlock>
           ))}
         </section>
+        {underFigure}
       </div>
     </div>
   );
