@@ -80,8 +80,11 @@ export function serveDocumentation(routes: readonly Route[], basePath: string): 
     customSiteTitle: "Evenswing API",
     swaggerOptions: { validatorUrl: null, defaultModelsExpandDepth: -1, docExpansion: "list" },
   };
-  // The page's own style blocks only undo browser defaults, and the content policy refuses them.
-  const page = swaggerUi.generateHTML(document, options).replace(/<style>[\s\S]*?<\/style>/g, "");
+  // The page's own styles only undo browser defaults and hide a sprite, and the content policy refuses them.
+  const page = swaggerUi
+    .generateHTML(document, options)
+    .replace(/<style>[\s\S]*?<\/style>/g, "")
+    .replace(/ style="[^"]*"/g, ' width="0" height="0"');
   router.use("/docs", swaggerUi.serveFiles(document, options));
   router.get("/docs", (request, response) => {
     // The page's assets are relative to it.

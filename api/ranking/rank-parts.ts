@@ -96,6 +96,7 @@ function startSearch(problem: Problem, parts: Part[], control: RankingControl) {
     const passedOver: { row: number; reason: PassedOverReason }[] = [];
     let complete = true;
     let partsDone = 0;
+    control.onProgress?.({ partsDone, partsTotal: rows });
     const callOff = () => Atomics.store(shared.cancelled, 0, 1);
     control.signal?.addEventListener("abort", callOff, { once: true });
     try {

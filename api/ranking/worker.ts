@@ -41,16 +41,13 @@ export default function searchParts(task: RankingTask): RankingOutcome {
   const top = new BestCandidates(task.limit, task.bar);
   const outcome: RankingOutcome = { candidates: [], passedOver: [], searchedTo: task.to };
   for (let row = task.from; row < task.to; row++) {
-    if (Atomics.load(task.cancelled, 0) === 1 || Date.now() > task.deadline) {
+    const best = task.mode === "top" ? top : new BestCandidates(1);
+    const reason = search.part(task.catalog, row, best);
+    if (reason === null) {
       outcome.searchedTo = row;
       break;
     }
-    if (task.mode === "top") {
-      search.part(task.catalog, row, top);
-      continue;
-    }
-    const best = new BestCandidates(1);
-    const reason = search.part(task.catalog, row, best);
+    if (task.mode === "top") continue;
     const [candidate] = best.sorted();
     if (candidate) outcome.candidates.push(candidate);
     else outcome.passedOver.push({ row, reason });
@@ -59,7 +56,7 @@ export default function searchParts(task: RankingTask): RankingOutcome {
   return outcome;
 }
 
-function prepare({ searchId, problem }: RankingTask): Search {
+function prepare({ searchId, problem, cancelled, deadline }: RankingTask): Search {
   if (prepared?.searchId === searchId) return prepared.search;
   const key = problem.divider.join(" ");
   let table = tables.get(key);
@@ -68,6 +65,7 @@ function prepare({ searchId, problem }: RankingTask): Search {
     if (tables.size >= KEPT_TABLES) tables.delete(tables.keys().next().value as string);
     tables.set(key, table);
   }
-  prepared = { searchId, search: new Search(problem, table) };
+  const shouldStop = () => Atomics.load(cancelled, 0) === 1 || Date.now() > deadline;
+  prepared = { searchId, search: new Search(problem, table, shouldStop) };
   return prepared.search;
 }

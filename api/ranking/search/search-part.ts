@@ -46,6 +46,8 @@ export class Search {
   readonly #leastInput: number;
   readonly #lines: Line[][];
   readonly #pointwise: boolean;
+  readonly #shouldStop: () => boolean;
+  #stopped = false;
   /** How far the part's combinations came: the furthest condition that one failed. */
   #furthest = 0;
   /** Where the last slice of the present line ended: widened slices may touch, and no ratio is to be met twice. */
@@ -54,9 +56,11 @@ export class Search {
   /**
    * @param problem the brief in numbers
    * @param every the ratio table of the brief's divider values
+   * @param shouldStop asked often: whether to give up, as nobody waits any more or the time is over
    */
-  constructor(problem: Problem, every: RatioTable) {
+  constructor(problem: Problem, every: RatioTable, shouldStop: () => boolean = () => false) {
     this.#problem = problem;
+    this.#shouldStop = shouldStop;
     this.#every = every;
     const { vdd, inputResistanceMin, resistorPower } = problem;
     this.#table = filterRatioTable(every, (r1, r2) => {
@@ -77,10 +81,10 @@ export class Search {
    *
    * @param row the part's row in the catalog
    * @param best the list; with a limit of one it ends up holding the part's best fit
-   * @returns why the part has no fit: the furthest condition that any of its combinations failed. Only meaningful
-   * when `best` stays empty.
+   * @returns why the part has no fit: the furthest condition that any of its combinations failed, only meaningful when
+   * `best` stays empty; null when the search was stopped and the part is not done
    */
-  part(catalog: Catalog, row: number, best: BestCandidates): Condition {
+  part(catalog: Catalog, row: number, best: BestCandidates): Condition | null {
     const { vdd, deratingVds, deratingPower, ambientMax } = this.#problem;
     if (vdd > deratingVds * catalog.vdss[row]) return "rail-rating";
     this.#furthest = 0;
@@ -97,7 +101,7 @@ export class Search {
     };
     const kUpper = device.k * (1 + device.lambda * vdd);
     for (const lines of this.#lines) this.#searchBlock(device, kUpper, lines, 0, lines.length - 1, best);
-    return CONDITIONS[this.#furthest];
+    return this.#stopped ? null : CONDITIONS[this.#furthest];
   }
 
   #fail(condition: Condition): void {
@@ -113,6 +117,8 @@ export class Search {
     to: number,
     best: BestCandidates,
   ): void {
+    this.#stopped ||= this.#shouldStop();
+    if (this.#stopped) return;
     const first = lines[from];
     const last = lines[to];
     const threshold = best.threshold;
