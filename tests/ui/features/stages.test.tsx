@@ -1,4 +1,4 @@
-import { screen, waitFor, within } from "@testing-library/react";
+import { configure, screen, waitFor, within } from "@testing-library/react";
 import { HttpResponse, http } from "msw";
 import { describe, expect, it } from "vitest";
 import { type Brief, briefSchema } from "#shared/schemas/brief";
@@ -12,6 +12,8 @@ import { renderAt } from "../support/render";
 import { API, playServer, server, signedInAs } from "../support/server";
 
 playServer();
+// A whole sheet has many roles to look through, which takes a loaded machine more than the usual second.
+configure({ asyncUtilTimeout: 5000 });
 
 const BRIEF: Brief = briefSchema.parse({
   rail: { volts: 12 },
@@ -57,21 +59,85 @@ function playStage(stage = buildStage()): UpdateStage[] {
   return saved;
 }
 
+/** Plays a stage that R. Other has changed since it was opened: only an edit of their version is taken. */
+function playStaleStage(theirs: Partial<Stage>): UpdateStage[] {
+  const saved = playStage();
+  const current = buildStage({ ...theirs, version: 4 });
+  server.use(
+    http.put(`${API}/stages/4`, async ({ request }) => {
+      const change = (await request.json()) as UpdateStage;
+      saved.push(change);
+      if (change.version === 4) return HttpResponse.json({ ...current, ...change, version: 5 });
+      const problem = {
+        type: "about:blank",
+        title: "Changed meanwhile",
+        status: 409,
+        code: "stage.version_conflict",
+        detail: "R. Other changed this stage meanwhile.",
+        errors: [],
+        current,
+      };
+      return HttpResponse.json(problem, { status: 409 });
+    }),
+  );
+  return saved;
+}
+
+async function rename(user: User, name: string) {
+  await user.click(await screen.findByRole("button", { name: /rename/ }));
+  const box = within(await screen.findByRole("dialog")).getByLabelText("Name");
+  await user.clear(box);
+  await user.type(box, name);
+  await user.click(screen.getByRole("button", { name: "Save" }));
+}
+
+/** The value that a resistor's stepper shows. */
+function shown(resistor: string): string | null {
+  return within(screen.getByRole("group", { name: resistor })).getByRole("status").textContent;
+}
+
 /** The figure beside a name on the sheet. */
 async function figure(name: string): Promise<string> {
   const link = await screen.findByRole("link", { name });
   return link.closest("dt")?.nextElementSibling?.textContent ?? "";
 }
 
-async function step(user: ReturnType<typeof renderAt>["user"], name: string, way: "higher" | "lower") {
+type User = ReturnType<typeof renderAt>["user"];
+
+async function step(user: User, name: string, way: "higher" | "lower") {
   const group = await screen.findByRole("group", { name });
   await user.click(within(group).getByRole("button", { name: new RegExp(`^${name} ${way}`) }));
   return within(group).getByRole("status").textContent;
 }
 
+/**
+ * Without channel-length modulation: with x the overdrive, VG - VT = x + RS K x², whose positive root gives ID = K x².
+ */
+function squareLawCurrent({ r1, r2, rs }: typeof RESISTORS): number {
+  const [k, vt, vdd] = [10e-3, 1.2, 12];
+  const room = (vdd * r2) / (r1 + r2) - vt;
+  const overdrive = (Math.sqrt(1 + 4 * rs * k * room) - 1) / (2 * rs * k);
+  return k * overdrive ** 2;
+}
+
+const inMilliamperes = (amperes: number) => `${(1e3 * amperes).toPrecision(3)} mA`;
+
 // Expected Q-points: ID = K (VGS - VT)² (1 + λ VDS) with VT = 1.2 V, K = 10 mA/V², λ = 0.01, solved by bisection apart
 // from the product's code.
 describe("a stage's sheet", () => {
+  it("moves the Q-point to where the quadratic puts it", async () => {
+    signedInAs("viewer");
+    playStage(buildStage({ part: { ...PART, lambda: 0 } }));
+    const { user } = renderAt("/stages/4", PAGES);
+    expect(await figure("Drain current")).toBe(inMilliamperes(squareLawCurrent(RESISTORS)));
+    await step(user, "R2", "higher");
+    const stepped = { ...RESISTORS, r2: 820e3 };
+    const current = squareLawCurrent(stepped);
+    expect(await figure("Drain current")).toBe(inMilliamperes(current));
+    const vds = 12 - current * (stepped.rd + stepped.rs);
+    expect(await figure("Drain-source voltage")).toBe(`${vds.toPrecision(3)} V`);
+  });
+
   it("recalculates everything when a resistor is stepped in its series", async () => {
     signedInAs("designer");
     playStage();
@@ -176,37 +242,60 @@ describe("changing a kept stage", () => {
     expect(saved[0]).toMatchObject({ name: "Board A", note: "Mind the cold.", resistors: RESISTORS });
   });
 
-  it("that somebody else changed meanwhile is refused, and the latest can be loaded", async () => {
+  it("leaves stepped values on the screen while it is renamed", async () => {
     signedInAs("designer");
-    playStage();
-    const theirs = buildStage({ version: 4, resistors: { ...RESISTORS, rd: 2400 } });
-    server.use(
-      http.put(`${API}/stages/4`, () =>
-        HttpResponse.json(
-          {
-            type: "about:blank",
-            title: "Changed meanwhile",
-            status: 409,
-            code: "stage.version_conflict",
-            detail: "R. Other changed this stage meanwhile.",
-            errors: [{ path: "resistors.rd", message: "Is now 2400" }],
-            current: theirs,
-          },
-          { status: 409 },
-        ),
-      ),
-    );
+    const saved = playStage();
+    const { user } = renderAt("/stages/4", PAGES);
+    await step(user, "R2", "higher");
+    await rename(user, "Board A");
+    expect(await screen.findByRole("heading", { name: "Board A" })).toBeTruthy();
+    expect(saved[0].resistors).toEqual(RESISTORS);
+    expect(screen.getByText(/R2 750k → 820k/)).toBeTruthy();
+  });
+
+  it("that somebody else changed meanwhile is refused, and lays one's own values over the latest", async () => {
+    signedInAs("designer");
+    const saved = playStaleStage({ resistors: { ...RESISTORS, rd: 2400 } });
     const { user } = renderAt("/stages/4", PAGES);
     await step(user, "R2", "higher");
     await user.click(screen.getByRole("button", { name: "Keep these values" }));
     const dialog = await screen.findByRole("dialog");
     expect(within(dialog).getByText("R. Other changed this stage meanwhile.")).toBeTruthy();
-    expect(within(dialog).getByText("Is now 2400")).toBeTruthy();
+    expect(within(dialog).getByText("2k7 → 2k4")).toBeTruthy();
     await user.click(within(dialog).getByRole("button", { name: "Load the latest" }));
-    await waitFor(() => {
-      const rd = screen.getByRole("group", { name: "RD" });
-      expect(within(rd).getByRole("status").textContent).toBe("2k4");
-    });
+    await waitFor(() => expect(shown("RD")).toBe("2k4"));
+    expect(shown("R2")).toBe("820k");
+    await user.click(screen.getByRole("button", { name: "Keep these values" }));
+    await waitFor(() => expect(screen.queryByText(/750k → 820k/)).toBeNull());
+    expect(saved.at(-1)).toMatchObject({ version: 4, resistors: { ...RESISTORS, r2: 820e3, rd: 2400 } });
+  });
+
+  it("that somebody else changed meanwhile keeps a typed note, and takes in what they changed", async () => {
+    signedInAs("designer");
+    const saved = playStaleStage({ name: "Their name" });
+    const { user } = renderAt("/stages/4", PAGES);
+    await user.click(await screen.findByRole("button", { name: /rename/ }));
+    const note = within(await screen.findByRole("dialog")).getByLabelText("Note");
+    await user.clear(note);
+    await user.type(note, "Long thought about.");
+    await user.click(screen.getByRole("button", { name: "Save" }));
+    await screen.findByText("First stage → Their name");
+    await user.click(screen.getByRole("button", { name: "Load the latest" }));
+    expect(await screen.findByDisplayValue("Long thought about.")).toBeTruthy();
+    expect(screen.getByDisplayValue("Their name")).toBeTruthy();
+    await user.click(screen.getByRole("button", { name: "Save" }));
+    await waitFor(() => expect(screen.queryByRole("dialog")).toBeNull());
+    expect(saved.at(-1)).toMatchObject({ version: 4, name: "Their name", note: "Long thought about." });
+  });
+
+  it("that is refused can be put off, and what was typed stays", async () => {
+    signedInAs("designer");
+    playStaleStage({ name: "Their name" });
+    const { user } = renderAt("/stages/4", PAGES);
+    await rename(user, "My name");
+    await screen.findByText("First stage → Their name");
+    await user.click(screen.getByRole("button", { name: "Not now" }));
+    expect(await screen.findByDisplayValue("My name")).toBeTruthy();
   });
 
   it("deletes it with a way back", async () => {
@@ -307,6 +396,39 @@ describe("a fit that isn't kept", () => {
 });
 
 describe("the list of stages", () => {
+  it("deletes a stage with a way back, for those who may", async () => {
+    signedInAs("designer");
+    const calls: string[] = [];
+    const items = () => (calls.at(-1) === "delete" ? [] : [buildStage()]);
+    server.use(
+      http.get(`${API}/stages`, () => HttpResponse.json({ items: items() })),
+      http.delete(`${API}/stages/4`, () => {
+        calls.push("delete");
+        return new HttpResponse(null, { status: 204 });
+      }),
+      http.post(`${API}/stages/4/restore`, () => {
+        calls.push("restore");
+        return HttpResponse.json(buildStage());
+      }),
+    );
+    const { user, router } = renderAt("/stages", PAGES);
+    await user.click(await screen.findByRole("button", { name: "Delete First stage" }));
+    expect(await screen.findByText("No stage kept yet.")).toBeTruthy();
+    await user.click(await screen.findByRole("button", { name: "Undo" }));
+    expect(await screen.findByText("First stage")).toBeTruthy();
+    expect(calls).toEqual(["delete", "restore"]);
+    expect(router.state.location.pathname).toBe("/stages");
+  });
+
+  it("offers a viewer no deleting", async () => {
+    signedInAs("viewer");
+    server.use(http.get(`${API}/stages`, () => HttpResponse.json({ items: [buildStage()] })));
+    renderAt("/stages", PAGES);
+    await screen.findByText("First stage");
+    expect(screen.getByRole("link", { name: "First brief" }).getAttribute("href")).toBe("/briefs/7");
+    expect(screen.queryByRole("button", { name: /delete/i })).toBeNull();
+  });
+
   it("shows each stage's balance and opens its sheet by keyboard", async () => {
     signedInAs("viewer");
     playStage();

@@ -12,7 +12,9 @@ export function missedConditions(part: Part, brief: Brief, sheet: StageSheet): s
   if (bias.region === "cutoff")
     return ["The gate sits below the threshold: the device is off. Raise R2 or lower R1."];
   if (bias.region === "ohmic") {
-    return ["The device is in the ohmic region and can't swing. Lower the gate voltage, RD or RS."];
+    // A larger RS takes drain current away and so lifts the drain; where there is none it can't be stepped.
+    const raise = sheet.values.rs > 0 ? "R1 or RS" : "R1";
+    return [`The device is in the ohmic region and can't swing. Lower R2 or RD, or raise ${raise}.`];
   }
   const missed: string[] = [];
   const atLeast = (name: string, value: number, limit: number | undefined, unit: Unit) => {

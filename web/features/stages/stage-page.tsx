@@ -1,8 +1,8 @@
 import { useQuery } from "@tanstack/react-query";
-import { useState } from "react";
+import { useMemo, useState } from "react";
 import { useNavigate, useParams } from "react-router-dom";
 import type { Problem } from "#shared/schemas/problem";
-import type { Resistors, Stage } from "#shared/schemas/stage";
+import type { Resistors, Stage, UpdateStage } from "#shared/schemas/stage";
 import { problemOf } from "../../lib/api";
 import { formatDay } from "../../lib/dates";
 import { useMay } from "../../lib/session";
@@ -11,10 +11,11 @@ import { Button } from "../../ui/button";
 import { MarginNote } from "../../ui/margin-note";
 import { ProblemMessage } from "../../ui/problem-message";
 import { SkeletonRows } from "../../ui/skeleton";
-import { showToast, showUndoToast } from "../../ui/toast";
+import { showToast } from "../../ui/toast";
 import { ChangedValues } from "./changed-values";
-import { KeepDialog } from "./keep-dialog";
-import { stageQuery, useDeleteStage, useRestoreStage, useSaveStage } from "./queries";
+import { DeleteStage } from "./delete-stage";
+import { KeepDialog, type NameAndNote } from "./keep-dialog";
+import { stageQuery, useSaveStage } from "./queries";
 import { StageConflict } from "./stage-conflict";
 import { StageSheetView } from "./stage-sheet-view";
 import { StageTitle } from "./stage-title";
@@ -29,33 +30,50 @@ export function StagePage() {
   return <KeptStage key={data.id} stage={data} />;
 }
 
-type Change = { name: string; note: string; resistors: Resistors };
+/** What is typed, and the stage it is typed over, whose version the save must still find. */
+type Draft = { words: NameAndNote; base: Stage };
 
 function KeptStage({ stage }: { stage: Stage }) {
   const mayWrite = useMay("design:write");
   const save = useSaveStage(stage.id);
-  const [resistors, setResistors] = useState(stage.resistors);
-  const [editing, setEditing] = useState(false);
-  const [conflict, setConflict] = useState<{ problem: Problem; mine: Change } | null>(null);
+  const navigate = useNavigate();
+  // Only what was stepped: whatever else somebody changes meanwhile is taken in beside it.
+  const [stepped, setStepped] = useState<Partial<Resistors>>({});
+  const [draft, setDraft] = useState<Draft | null>(null);
+  const [conflict, setConflict] = useState<Problem | null>(null);
+  const resistors = useMemo(() => ({ ...stage.resistors, ...stepped }), [stage.resistors, stepped]);
 
-  const store = (change: Change, done: string) =>
-    save.mutate(
-      { ...change, version: stage.version },
-      {
-        onSuccess: (next) => {
-          setResistors(next.resistors);
-          setEditing(false);
-          showToast(done);
-        },
-        onError: (error) => {
-          const problem = problemOf(error);
-          if (problem.status === 409) {
-            setEditing(false);
-            setConflict({ problem, mine: change });
-          } else if (!editing) showToast(problem.detail ?? problem.title, { tone: "caution" });
-        },
+  const store = (change: UpdateStage, onKept: () => void) =>
+    save.mutate(change, {
+      onSuccess: onKept,
+      onError: (error) => {
+        const problem = problemOf(error);
+        if (problem.status === 409) setConflict(problem);
+        else if (draft === null) showToast(problem.detail ?? problem.title, { tone: "caution" });
       },
-    );
+    });
+  const storeValues = () =>
+    store({ name: stage.name, note: stage.note, resistors, version: stage.version }, () => {
+      setStepped({});
+      showToast("Kept the new values.");
+    });
+  const storeWords = (words: NameAndNote, base: Stage) => {
+    setDraft({ words, base });
+    store({ ...words, resistors: base.resistors, version: base.version }, () => {
+      setDraft(null);
+      showToast("Saved.");
+    });
+  };
+  const edit = () => {
+    save.reset();
+    setDraft({ words: { name: stage.name, note: stage.note }, base: stage });
+  };
+  const takeLatest = (current: Stage) => {
+    save.reset();
+    setStepped((mine) => differing({ ...current.resistors, ...mine }, current.resistors));
+    setDraft(draft && laidOver(current, draft));
+    setConflict(null);
+  };
 
   return (
     <>
@@ -70,10 +88,12 @@ function KeptStage({ stage }: { stage: Stage }) {
             </Button>
             {mayWrite && (
               <>
-                <Button variant="link" onClick={() => setEditing(true)}>
+                <Button variant="link" onClick={edit}>
                   rename, note
                 </Button>
-                <DeleteStage stage={stage} />
+                <DeleteStage stage={stage} onDeleted={() => navigate("/stages")}>
+                  delete
+                </DeleteStage>
               </>
             )}
           </>
@@ -83,17 +103,13 @@ function KeptStage({ stage }: { stage: Stage }) {
         part={stage.part}
         brief={stage.brief}
         resistors={resistors}
-        onChange={setResistors}
+        onChange={(next) => setStepped(differing(next, stage.resistors))}
         underResistors={
           <ChangedValues
             kept={stage.resistors}
             now={resistors}
-            onBack={() => setResistors(stage.resistors)}
-            onKeep={
-              mayWrite
-                ? () => store({ name: stage.name, note: stage.note, resistors }, "Kept the new values.")
-                : null
-            }
+            onBack={() => setStepped({})}
+            onKeep={mayWrite ? storeValues : null}
             busy={save.isPending}
           />
         }
@@ -110,24 +126,23 @@ function KeptStage({ stage }: { stage: Stage }) {
           </div>
         }
       />
-      <KeepDialog
-        open={editing}
-        onOpenChange={setEditing}
-        title="Name and note"
-        initial={{ name: stage.name, note: stage.note }}
-        confirmLabel="Save"
-        busy={save.isPending}
-        error={editing ? save.error : null}
-        onConfirm={({ name, note }) => store({ name, note, resistors: stage.resistors }, "Saved.")}
-      />
+      {draft && (
+        <KeepDialog
+          open={conflict === null}
+          onOpenChange={(open) => !open && conflict === null && setDraft(null)}
+          title="Name and note"
+          initial={draft.words}
+          confirmLabel="Save"
+          busy={save.isPending}
+          error={save.error}
+          onConfirm={(words) => storeWords(words, draft.base)}
+        />
+      )}
       {conflict && (
         <StageConflict
-          problem={conflict.problem}
-          mine={conflict.mine}
-          onTake={(current) => {
-            setResistors(current.resistors);
-            setConflict(null);
-          }}
+          problem={conflict}
+          kept={draft?.base ?? stage}
+          onTake={takeLatest}
           onClose={() => setConflict(null)}
         />
       )}
@@ -135,26 +150,15 @@ function KeptStage({ stage }: { stage: Stage }) {
   );
 }
 
-function DeleteStage({ stage }: { stage: Stage }) {
-  const remove = useDeleteStage();
-  const restore = useRestoreStage();
-  const navigate = useNavigate();
-  const tell = (error: unknown) => showToast(problemOf(error).title, { tone: "caution" });
-  return (
-    <Button
-      variant="link"
-      busy={remove.isPending}
-      onClick={() =>
-        remove.mutate(stage.id, {
-          onSuccess: () => {
-            navigate("/stages");
-            showUndoToast(`Deleted "${stage.name}".`, () => restore.mutate(stage.id, { onError: tell }));
-          },
-          onError: tell,
-        })
-      }
-    >
-      delete
-    </Button>
-  );
+function differing(now: Resistors, kept: Resistors): Partial<Resistors> {
+  const changed = Object.entries(now).filter(([name, ohms]) => kept[name as keyof Resistors] !== ohms);
+  return Object.fromEntries(changed);
+}
+
+/** Lays what was typed over a newer stage; null where nothing of it is left to save. */
+function laidOver(current: Stage, { words, base }: Draft): Draft | null {
+  const name = words.name === base.name ? current.name : words.name;
+  const note = words.note === base.note ? current.note : words.note;
+  const isSaved = name === current.name && note === current.note;
+  return isSaved ? null : { words: { name, note }, base: current };
 }

@@ -92,6 +92,7 @@ export function StageSheetView(props: StageSheetViewProps) {
                 onChange={setCelsius}
                 min={brief.ambient.min}
                 max={brief.ambient.max}
+                mark={ROOM_TEMPERATURE}
                 format={(value) => formatQuantity(value, "°C", exact)}
               />
             </div>

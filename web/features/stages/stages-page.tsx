@@ -7,6 +7,7 @@ import { BalanceBar } from "../../figures/balance-bar";
 import { problemOf } from "../../lib/api";
 import { formatDay } from "../../lib/dates";
 import { stagesQuery } from "../../lib/lists";
+import { useMay } from "../../lib/session";
 import { useDocumentTitle } from "../../lib/use-document-title";
 import { Button } from "../../ui/button";
 import { DataTable } from "../../ui/data-table";
@@ -17,6 +18,7 @@ import { ProblemMessage } from "../../ui/problem-message";
 import { SkeletonRows } from "../../ui/skeleton";
 import { useMediaQuery } from "../../ui/use-media-query";
 import { Value } from "../../ui/value";
+import { DeleteStage } from "./delete-stage";
 
 type Row = { stage: Stage; figures: StageFigures };
 
@@ -24,6 +26,7 @@ type Row = { stage: Stage; figures: StageFigures };
 export function StagesPage() {
   useDocumentTitle("Stages");
   const { data, error, refetch, isFetching } = useQuery(stagesQuery);
+  const mayWrite = useMay("design:write");
   const navigate = useNavigate();
   const isNarrow = !useMediaQuery("(width >= 52rem)");
   const rows = useMemo(
@@ -52,7 +55,7 @@ export function StagesPage() {
         ) : (
           <DataTable
             label="Kept stages"
-            columns={columnsFor(isNarrow)}
+            columns={columnsFor(mayWrite, isNarrow)}
             rows={rows}
             rowId={({ stage }) => String(stage.id)}
             onOpen={({ stage }) => navigate(`/stages/${stage.id}`)}
@@ -63,7 +66,7 @@ export function StagesPage() {
   );
 }
 
-function columnsFor(isNarrow: boolean): DataTableColumn<Row>[] {
+function columnsFor(mayWrite: boolean, isNarrow: boolean): DataTableColumn<Row>[] {
   const name: DataTableColumn<Row> = {
     id: "name",
     header: "stage",
@@ -139,6 +142,37 @@ function columnsFor(isNarrow: boolean): DataTableColumn<Row>[] {
       cell: ({ figures: { bias } }) => <Value number={bias.gain} unit="" />,
     },
     {
+      id: "drain-current",
+      header: (
+        <>
+          I<sub>D</sub>
+        </>
+      ),
+      name: "Drain current",
+      numeric: true,
+      hideable: true,
+      sortValue: ({ figures: { bias } }) => bias.id,
+      cell: ({ figures: { bias } }) => <Value number={bias.id} unit="A" />,
+    },
+    {
+      id: "origin",
+      header: "from brief",
+      hideable: true,
+      sortValue: ({ stage }) => stage.origin?.briefName,
+      cell: ({ stage: { origin } }) =>
+        origin && (
+          <>
+            <Link
+              to={`/briefs/${origin.briefId}`}
+              className="block underline underline-offset-3 hover:text-ink"
+            >
+              {origin.briefName}
+            </Link>
+            <span className="block text-quiet text-sm">version {origin.briefVersion}</span>
+          </>
+        ),
+    },
+    {
       id: "changed",
       header: "changed",
       sortValue: ({ stage }) => stage.updatedAt,
@@ -150,5 +184,18 @@ function columnsFor(isNarrow: boolean): DataTableColumn<Row>[] {
       ),
     },
   ];
+  if (mayWrite) {
+    figures.push({
+      id: "actions",
+      header: "",
+      name: "Actions",
+      align: "right",
+      cell: ({ stage }) => (
+        <DeleteStage stage={stage} label={`Delete ${stage.name}`}>
+          Delete
+        </DeleteStage>
+      ),
+    });
+  }
   return isNarrow ? [name, balance, ...figures, ...resistors] : [name, ...resistors, balance, ...figures];
 }
