@@ -30,6 +30,11 @@ function difference(value: Tree, base: Tree): Tree {
   return result;
 }
 
+/** Whether two briefs ask for the same, in whatever order their fields were filled in. */
+export function isSameBrief(a: Brief, b: Brief): boolean {
+  return Object.keys(difference(a as Tree, b as Tree)).length === 0;
+}
+
 function merge(base: Tree, change: Tree): Tree {
   const result: Tree = { ...base };
   for (const [key, value] of Object.entries(change)) {

@@ -220,6 +220,49 @@ describe("the ranking", () => {
     expect(await screen.findByText("35,437,621,248")).toBeTruthy();
   });
 
+  it("that was cancelled ranks again once the brief has changed", async () => {
+    signedInAs("designer");
+    server.use(http.post(`${API}/fits`, () => new Promise<Response>(() => {})));
+    const { user } = renderAt("/briefs/new?b={}", { "/briefs/new": <NewBriefPage /> });
+    await user.click(await screen.findByRole("button", { name: "Cancel" }));
+    expect(await screen.findByText("Ranking was cancelled.")).toBeTruthy();
+    playRanking(buildAnswer());
+    await fill(user, "Swing", "2 V");
+    await user.click(screen.getByRole("button", { name: "Rank the fits" }));
+    expect(await screen.findByText("35,437,621,248")).toBeTruthy();
+  });
+
+  it("goes back with the browser to the brief before, in the sentence and in the list", async () => {
+    signedInAs("designer");
+    const asked = playRanking(buildAnswer());
+    const { user, router } = renderAt("/briefs/new?b={}", { "/briefs/new": <NewBriefPage /> });
+    await screen.findByText("35,437,621,248");
+    await fill(user, "Swing", "2 V");
+    await user.click(screen.getByRole("button", { name: "Rank the fits" }));
+    await waitFor(() => expect(asked.length).toBe(2));
+    void router.navigate(-1);
+    await waitFor(() =>
+      expect(screen.getByRole<HTMLInputElement>("textbox", { name: "Swing" }).value).toBe("1 V"),
+    );
+    expect(screen.queryByText(/The brief has changed since/)).toBeNull();
+  });
+
+  it("says that the brief has changed since only when it has, in whatever order it was filled in", async () => {
+    signedInAs("designer");
+    const asked = playRanking(buildAnswer());
+    const { user } = renderAt("/briefs/new", { "/briefs/new": <NewBriefPage /> });
+    await user.click(await screen.findByRole("button", { name: "more conditions" }));
+    await fill(user, "Greatest gain", "40");
+    await fill(user, "Least gain", "4");
+    await user.selectOptions(screen.getByRole("combobox", { name: "Mounting" }), "Surface mount");
+    await user.click(screen.getByRole("button", { name: "Rank the fits" }));
+    await screen.findByText("35,437,621,248");
+    expect(asked[0].brief).toMatchObject({ gain: { min: 4, max: 40 }, parts: { mounting: "surface" } });
+    expect(screen.queryByText(/The brief has changed since/)).toBeNull();
+    await fill(user, "Least gain", "5");
+    expect(await screen.findByText(/The brief has changed since/)).toBeTruthy();
+  });
+
   it("relaxes the one condition that stands in the way, and ranks again", async () => {
     signedInAs("designer");
     const nothing = buildAnswer({

@@ -2,7 +2,7 @@ import { type ReactNode, useId, useState } from "react";
 import { useWatch } from "react-hook-form";
 import { useSearchParams } from "react-router-dom";
 import type { Brief } from "#shared/schemas/brief";
-import { writeBriefParameter } from "../../lib/brief-link";
+import { isSameBrief, writeBriefParameter } from "../../lib/brief-link";
 import { conditionsInWords } from "../../lib/brief-words";
 import { Button } from "../../ui/button";
 import type { DataTableSort } from "../../ui/data-table-model";
@@ -35,7 +35,7 @@ export function BriefWorkbench({ brief, ranked, briefId, title }: BriefWorkbench
   const conditionsId = useId();
 
   const rank = (next: Brief) => {
-    if (ranked && JSON.stringify(next) === JSON.stringify(ranked)) return ranking.rank();
+    if (ranked && isSameBrief(next, ranked)) return ranking.rank();
     setSearch((params) => {
       params.set("b", writeBriefParameter(next) || "{}");
       return params;
@@ -102,7 +102,7 @@ export function BriefWorkbench({ brief, ranked, briefId, title }: BriefWorkbench
                 { replace: true, preventScrollReset: true },
               )
             }
-            isStale={!ranking.isRanking && JSON.stringify(current) !== JSON.stringify(ranked)}
+            isStale={!ranking.isRanking && !isSameBrief(current, ranked)}
             onRelax={(relax) => {
               const relaxed = relaxBrief(ranked, relax);
               form.reset(relaxed, { keepDefaultValues: true });

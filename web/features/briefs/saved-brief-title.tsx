@@ -3,6 +3,7 @@ import { useBlocker, useNavigate, useSearchParams } from "react-router-dom";
 import type { Brief, SavedBrief } from "#shared/schemas/brief";
 import type { Problem } from "#shared/schemas/problem";
 import { problemOf } from "../../lib/api";
+import { isSameBrief } from "../../lib/brief-link";
 import { useMay } from "../../lib/session";
 import { Button } from "../../ui/button";
 import { ConfirmDialog } from "../../ui/dialog";
@@ -17,7 +18,7 @@ type SavedBriefTitleProps = { saved: SavedBrief; current: Brief; validate: () =>
 /** A saved brief's name, version and state, with what can be done about them. */
 export function SavedBriefTitle({ saved, current, validate }: SavedBriefTitleProps) {
   const mayWrite = useMay("design:write");
-  const isDirty = JSON.stringify(current) !== JSON.stringify(saved.brief);
+  const isDirty = !isSameBrief(current, saved.brief);
   const save = useSaveBrief(saved.id);
   const [, setSearch] = useSearchParams();
   const navigate = useNavigate();

@@ -37,11 +37,16 @@ const NAMES: Record<string, string> = {
   buildQuantity: "Build quantity",
 };
 
-/** The form of a brief, with every complaint by its field's name. */
+/**
+ * The form of a brief, with every complaint by its field's name.
+ *
+ * @param brief what the form starts from; when it changes (one goes back with the browser), the form follows
+ */
 export function useBriefForm(brief: Brief) {
   const form: BriefForm = useForm<Brief, unknown, Brief>({
     resolver: zodResolver(briefSchema) as never,
     defaultValues: brief,
+    values: brief,
     mode: "onChange",
   });
   const [unreadable, setUnreadable] = useState<Record<string, string>>({});

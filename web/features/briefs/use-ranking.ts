@@ -29,7 +29,10 @@ export type RankingState = {
 export function useRanking(brief: Brief | null): RankingState {
   const client = useQueryClient();
   const [progress, setProgress] = useState<RankingProgress | null>(null);
-  const [cancelled, setCancelled] = useState(false);
+  const key = JSON.stringify(brief);
+  // Cancelling holds for the brief it was about, so another one is ranked again.
+  const [cancelledKey, setCancelledKey] = useState<string | null>(null);
+  const cancelled = cancelledKey === key;
   const query = useQuery({
     queryKey: ["fits", brief],
     enabled: brief !== null && !cancelled,
@@ -51,11 +54,11 @@ export function useRanking(brief: Brief | null): RankingState {
     progress,
     cancelled: cancelled && !query.isFetching,
     rank: () => {
-      setCancelled(false);
+      setCancelledKey(null);
       void query.refetch();
     },
     cancel: () => {
-      setCancelled(true);
+      setCancelledKey(key);
       void client.cancelQueries({ queryKey: ["fits", brief] });
     },
   };
