@@ -15,7 +15,10 @@ export function createQueryClient(): QueryClient {
       },
     }),
     defaultOptions: {
+      // Offline, an answer that says so is worth more than one that waits in silence.
+      mutations: { networkMode: "always" },
       queries: {
+        networkMode: "always",
         // A refusal stays a refusal; only a server that wasn't reached is worth another try.
         retry: (failures, error) => failures < 2 && statusOf(error) === 0,
       },

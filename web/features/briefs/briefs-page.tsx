@@ -117,7 +117,8 @@ function RowActions({ brief }: { brief: SavedBrief }) {
   const deleteIt = () =>
     remove.mutate(brief.id, {
       onSuccess: () =>
-        showUndoToast(`Deleted "${brief.name}".`, () => restore.mutate(brief.id, { onError: tell })),
+        // By then the row is gone, and what was handed to mutate with it.
+        showUndoToast(`Deleted "${brief.name}".`, () => restore.mutateAsync(brief.id).catch(tell)),
       onError: tell,
     });
   return (

@@ -9,6 +9,9 @@ export const briefQuery = (id: number) =>
   queryOptions({
     queryKey: oneKey(id),
     queryFn: ({ signal }) => callApi(`/briefs/${id}`, { schema: savedBriefSchema, signal }),
+    // Nothing changes under one's hands: what somebody else saved meanwhile is told when one saves.
+    refetchOnWindowFocus: false,
+    refetchOnReconnect: false,
   });
 
 /** Takes a brief that the server answered with into the cache. */

@@ -22,7 +22,8 @@ export function DeleteStage({ stage, onDeleted, label, children }: DeleteStagePr
     remove.mutate(stage.id, {
       onSuccess: () => {
         onDeleted?.();
-        showUndoToast(`Deleted "${stage.name}".`, () => restore.mutate(stage.id, { onError: tell }));
+        // By then the button is gone, and what was handed to mutate with it.
+        showUndoToast(`Deleted "${stage.name}".`, () => restore.mutateAsync(stage.id).catch(tell));
       },
       onError: tell,
     });

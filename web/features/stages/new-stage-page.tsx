@@ -89,6 +89,8 @@ function briefAddress({ brief, briefId }: LinkedFit): string {
   return `/briefs/${briefId ?? "new"}?${search}`;
 }
 
+const LONGEST_NAME = 120;
+
 function KeepIt({ fit, name }: { fit: LinkedFit; name: string }) {
   const [open, setOpen] = useState(false);
   const keep = useKeepStage();
@@ -103,7 +105,7 @@ function KeepIt({ fit, name }: { fit: LinkedFit; name: string }) {
         open={open}
         onOpenChange={setOpen}
         title="Keep this stage"
-        initial={{ name, note: "" }}
+        initial={{ name: name.slice(0, LONGEST_NAME), note: "" }}
         confirmLabel="Keep it"
         busy={keep.isPending}
         error={keep.error}

@@ -11,6 +11,9 @@ export const stageQuery = (id: number) =>
   queryOptions({
     queryKey: oneKey(id),
     queryFn: ({ signal }) => callApi(`/stages/${id}`, { schema: stageSchema, signal }),
+    // Nothing changes under one's hands: what somebody else saved meanwhile is told when one saves.
+    refetchOnWindowFocus: false,
+    refetchOnReconnect: false,
   });
 
 /** The part of a fit that isn't kept yet. */

@@ -1,8 +1,8 @@
 import { useQuery } from "@tanstack/react-query";
-import { useMemo, useState } from "react";
+import { useState } from "react";
 import { useNavigate, useParams } from "react-router-dom";
 import type { Problem } from "#shared/schemas/problem";
-import type { Resistors, Stage, UpdateStage } from "#shared/schemas/stage";
+import type { Stage, UpdateStage } from "#shared/schemas/stage";
 import { problemOf } from "../../lib/api";
 import { formatDay } from "../../lib/dates";
 import { useMay } from "../../lib/session";
@@ -19,6 +19,7 @@ import { stageQuery, useSaveStage } from "./queries";
 import { StageConflict } from "./stage-conflict";
 import { StageSheetView } from "./stage-sheet-view";
 import { StageTitle } from "./stage-title";
+import { useTriedValues } from "./use-tried-values";
 
 /** A kept stage. */
 export function StagePage() {
@@ -37,11 +38,9 @@ function KeptStage({ stage }: { stage: Stage }) {
   const mayWrite = useMay("design:write");
   const save = useSaveStage(stage.id);
   const navigate = useNavigate();
-  // Only what was stepped: whatever else somebody changes meanwhile is taken in beside it.
-  const [stepped, setStepped] = useState<Partial<Resistors>>({});
+  const { resistors, tryValues, backToKept } = useTriedValues(stage.resistors);
   const [draft, setDraft] = useState<Draft | null>(null);
   const [conflict, setConflict] = useState<Problem | null>(null);
-  const resistors = useMemo(() => ({ ...stage.resistors, ...stepped }), [stage.resistors, stepped]);
 
   const store = (change: UpdateStage, onKept: () => void) =>
     save.mutate(change, {
@@ -54,7 +53,7 @@ function KeptStage({ stage }: { stage: Stage }) {
     });
   const storeValues = () =>
     store({ name: stage.name, note: stage.note, resistors, version: stage.version }, () => {
-      setStepped({});
+      backToKept();
       showToast("Kept the new values.");
     });
   const storeWords = (words: NameAndNote, base: Stage) => {
@@ -70,7 +69,6 @@ function KeptStage({ stage }: { stage: Stage }) {
   };
   const takeLatest = (current: Stage) => {
     save.reset();
-    setStepped((mine) => differing({ ...current.resistors, ...mine }, current.resistors));
     setDraft(draft && laidOver(current, draft));
     setConflict(null);
   };
@@ -103,12 +101,12 @@ function KeptStage({ stage }: { stage: Stage }) {
         part={stage.part}
         brief={stage.brief}
         resistors={resistors}
-        onChange={(next) => setStepped(differing(next, stage.resistors))}
+        onChange={tryValues}
         underResistors={
           <ChangedValues
             kept={stage.resistors}
             now={resistors}
-            onBack={() => setStepped({})}
+            onBack={backToKept}
             onKeep={mayWrite ? storeValues : null}
             busy={save.isPending}
           />
@@ -148,11 +146,6 @@ function KeptStage({ stage }: { stage: Stage }) {
       )}
     </>
   );
-}
-
-function differing(now: Resistors, kept: Resistors): Partial<Resistors> {
-  const changed = Object.entries(now).filter(([name, ohms]) => kept[name as keyof Resistors] !== ohms);
-  return Object.fromEntries(changed);
 }
 
 /** Lays what was typed over a newer stage; null where nothing of it is left to save. */

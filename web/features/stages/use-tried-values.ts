@@ -5,26 +5,33 @@ import { type Resistors, resistorsSchema } from "#shared/schemas/stage";
 const NAMES = ["r1", "r2", "rd", "rs"] as const;
 
 /**
- * The values that somebody tries on a kept stage. They stand in the address, so that one may go and look something up
- * or send the attempt to somebody, and it is still there.
- *
- * @returns the values as tried, and what sets them
+ * The values that somebody tries on a kept stage. Only what was stepped stands in the address: one may go and look
+ * something up, or send the attempt to somebody, and whatever else is changed meanwhile is taken in beside it.
  */
-export function useTriedValues(kept: Resistors): [Resistors, (next: Resistors) => void] {
+export function useTriedValues(kept: Resistors): {
+  resistors: Resistors;
+  tryValues: (next: Resistors) => void;
+  backToKept: () => void;
+} {
   const [search, setSearch] = useSearchParams();
-  const tried = useMemo(() => readTried(search, kept), [search, kept]);
-  const setTried = (next: Resistors) =>
+  const resistors = useMemo(() => readTried(search, kept), [search, kept]);
+  const write = (change: (params: URLSearchParams, name: keyof Resistors) => void) =>
     setSearch(
       (params) => {
-        for (const name of NAMES) {
-          if (next[name] === kept[name]) params.delete(name);
-          else params.set(name, String(next[name]));
-        }
+        for (const name of NAMES) change(params, name);
         return params;
       },
       { replace: true, preventScrollReset: true },
     );
-  return [tried, setTried];
+  return {
+    resistors,
+    tryValues: (next) =>
+      write((params, name) => {
+        if (next[name] === kept[name]) params.delete(name);
+        else params.set(name, String(next[name]));
+      }),
+    backToKept: () => write((params, name) => params.delete(name)),
+  };
 }
 
 function readTried(search: URLSearchParams, kept: Resistors): Resistors {
@@ -33,8 +40,9 @@ function readTried(search: URLSearchParams, kept: Resistors): Resistors {
     const text = search.get(name);
     const parsed = resistorsSchema.shape[name].safeParse(Number(text));
     // A wire stays a wire: whether there is a source resistor is the brief's to say.
-    if (text !== null && parsed.success && (parsed.data === 0) === (kept[name] === 0))
+    if (text !== null && parsed.success && (parsed.data === 0) === (kept[name] === 0)) {
       tried[name] = parsed.data;
+    }
   }
   return tried;
 }
