@@ -144,9 +144,9 @@ function columnsFor(mayWrite: boolean, isNarrow: boolean): DataTableColumn<Row>[
     {
       id: "drain-current",
       header: (
-        <>
+        <span>
           I<sub>D</sub>
-        </>
+        </span>
       ),
       name: "Drain current",
       numeric: true,
