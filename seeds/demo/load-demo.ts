@@ -68,7 +68,11 @@ async function insertStory(
   if (!story.stage) return;
   const parts = await selectAllParts(db, teamId);
   const supply = { rating: LARGEST_RATING, stocked: null };
-  const { fits } = await rankFits({ brief, objective: "centred", distinct: "part", limit: 5000 }, parts, supply);
+  const { fits } = await rankFits(
+    { brief, objective: "centred", distinct: "part", limit: 5000 },
+    parts,
+    supply,
+  );
   const best = fits.find(({ cautions }) => cautions.every(({ code }) => code !== "low-overdrive"));
   const part = parts.find(({ id }) => id === best?.part.id);
   if (!best || !part) throw new Error(`Nothing in the catalog fits the demo brief "${story.name}"`);

@@ -14,8 +14,7 @@ type MarginNoteProps = {
 };
 
 /**
- * A note in the margin beside the line it is about, as in a reviewed notebook. Put it in the right column of a
- * `MarginRow`; on a phone it folds under the line.
+ * A note in the margin beside the line it is about, as in a reviewed notebook.
  */
 export function MarginNote({ tone = "note", lead, tied = false, className, children }: MarginNoteProps) {
   const caution = tone === "caution";
@@ -55,22 +54,6 @@ export function CautionBlock({ children }: { children: ReactNode }) {
         Caution.
       </span>
       {children}
-    </div>
-  );
-}
-
-type MarginRowProps = {
-  children: ReactNode;
-  /** The notes about this line. */
-  notes?: ReactNode;
-};
-
-/** A line of the page with its margin: notes stand beside it on wide screens and under it on narrow ones. */
-export function MarginRow({ children, notes }: MarginRowProps) {
-  return (
-    <div className="grid grid-cols-1 gap-x-9 gap-y-3 lg:grid-cols-[minmax(0,1fr)_19rem]">
-      <div className="min-w-0">{children}</div>
-      {notes ? <div className="flex flex-col gap-3 pl-3 lg:pl-0">{notes}</div> : null}
     </div>
   );
 }
