@@ -1,3 +1,4 @@
+import { focusManager } from "@tanstack/react-query";
 import { screen, waitFor, within } from "@testing-library/react";
 import { HttpResponse, http } from "msw";
 import { describe, expect, it } from "vitest";
@@ -374,6 +375,23 @@ describe("a saved brief", () => {
     await user.click(within(dialog).getByRole("button", { name: "Save mine as a copy" }));
     await waitFor(() => expect(copy?.brief.swing.peak).toBe(2));
     expect(router.state.location.pathname).toBe("/briefs/7");
+  });
+
+  it("that somebody else saves meanwhile doesn't take away what was typed", async () => {
+    signedInAs("designer");
+    playRanking(buildAnswer());
+    let version = 3;
+    server.use(http.get(`${API}/briefs/7`, () => HttpResponse.json(buildSaved({ version }))));
+    const { user } = renderAt("/briefs/7", pages);
+    await fill(user, "Swing", "2 V");
+    version = 4;
+    focusManager.setFocused(false);
+    focusManager.setFocused(true);
+    // Long enough a task for an answer to have come in.
+    await fill(user, "Rail", "9 V");
+    focusManager.setFocused(undefined);
+    expect(screen.getByText("version 3 · changes not saved")).toBeTruthy();
+    expect(screen.getByRole<HTMLInputElement>("textbox", { name: "Swing" }).value).toBe("2 V");
   });
 
   it("asks before changes are left behind", async () => {

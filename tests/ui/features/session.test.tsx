@@ -1,19 +1,18 @@
-import { QueryClientProvider } from "@tanstack/react-query";
-import { cleanup, render, screen, waitFor, within } from "@testing-library/react";
-import userEvent from "@testing-library/user-event";
+import { onlineManager } from "@tanstack/react-query";
+import { cleanup, screen, waitFor, within } from "@testing-library/react";
 import { HttpResponse, http } from "msw";
-import { createMemoryRouter, Link, RouterProvider } from "react-router-dom";
-import { afterEach, describe, expect, it } from "vitest";
+import { Link } from "react-router-dom";
+import { describe, expect, it } from "vitest";
 import type { DemoAccounts } from "#shared/schemas/identity";
 import { BriefsPage } from "../../../web/features/briefs/briefs-page";
 import { HomePage } from "../../../web/features/home/home-page";
 import { SignInPage, safeReturn } from "../../../web/features/identity/sign-in-page";
 import { Frame, SignedInFrame } from "../../../web/features/shell/shell";
 import { createQueryClient } from "../../../web/lib/query-client";
+import { renderRoutes } from "../support/render";
 import { API, buildMe, playServer, server } from "../support/server";
 
 playServer();
-afterEach(cleanup);
 
 const refusal = (status: number, title: string, errors: { path: string; message: string }[] = []) =>
   HttpResponse.json({ type: "about:blank", title, status, code: "refused", errors }, { status });
@@ -63,7 +62,8 @@ function playSession({ demo = null as DemoAccounts | null, open = false } = {}) 
 }
 
 function renderProduct(address: string) {
-  const router = createMemoryRouter(
+  const { router, user } = renderRoutes(
+    address,
     [
       {
         element: <SignedInFrame />,
@@ -75,15 +75,9 @@ function renderProduct(address: string) {
       },
       { element: <Frame />, children: [{ path: "/sign-in", element: <SignInPage /> }] },
     ],
-    { initialEntries: [address] },
+    createQueryClient(),
   );
-  render(
-    <QueryClientProvider client={createQueryClient()}>
-      <RouterProvider router={router} />
-    </QueryClientProvider>,
-  );
-  const where = () => router.state.location.pathname + router.state.location.search;
-  return { where, user: userEvent.setup() };
+  return { where: () => router.state.location.pathname + router.state.location.search, user };
 }
 
 async function signIn(user: ReturnType<typeof renderProduct>["user"], password: string) {
@@ -167,6 +161,22 @@ describe("the sign-in page", () => {
 });
 
 describe("the home page", () => {
+  it("says that the server can't be reached while the browser is offline, and tries again when asked", async () => {
+    playSession({ open: true });
+    const { user } = renderProduct("/");
+    await screen.findByText("No brief yet.");
+    cleanup();
+
+    onlineManager.setOnline(false);
+    server.use(http.get(`${API}/briefs`, () => HttpResponse.error()));
+    renderProduct("/");
+    expect(await screen.findByText("The server can't be reached")).toBeTruthy();
+    onlineManager.setOnline(true);
+    playSession({ open: true });
+    await user.click(screen.getByRole("button", { name: "Try again" }));
+    expect(await screen.findByText("No brief yet.")).toBeTruthy();
+  });
+
   it("offers the first step while there is nothing yet", async () => {
     playSession({ open: true });
     renderProduct("/");

@@ -1,12 +1,14 @@
 import { QueryClient, QueryClientProvider } from "@tanstack/react-query";
-import { cleanup, render } from "@testing-library/react";
+import { cleanup, configure, render } from "@testing-library/react";
 import userEvent from "@testing-library/user-event";
 import { type ReactNode, Suspense } from "react";
-import { createMemoryRouter, RouterProvider } from "react-router-dom";
+import { createMemoryRouter, type RouteObject, RouterProvider } from "react-router-dom";
 import { afterEach } from "vitest";
 import { Toaster } from "../../../web/ui/toast";
 import { ResistanceStyleProvider } from "../../../web/ui/value";
 
+// A busy machine needs longer than the library's second.
+configure({ asyncUtilTimeout: 6000 });
 afterEach(cleanup);
 
 /**
@@ -15,19 +17,21 @@ afterEach(cleanup);
  * @param pages what stands at which path
  */
 export function renderAt(address: string, pages: Record<string, ReactNode>) {
-  const client = new QueryClient({ defaultOptions: { queries: { retry: false } } });
-  const router = createMemoryRouter(
-    Object.entries(pages).map(([path, page]) => ({
-      path,
-      element: (
-        <ResistanceStyleProvider value="rkm">
-          <Suspense fallback="Loading">{page}</Suspense>
-          <Toaster />
-        </ResistanceStyleProvider>
-      ),
-    })),
-    { initialEntries: [address] },
-  );
+  const routes = Object.entries(pages).map(([path, page]) => ({
+    path,
+    element: (
+      <ResistanceStyleProvider value="rkm">
+        <Suspense fallback="Loading">{page}</Suspense>
+        <Toaster />
+      </ResistanceStyleProvider>
+    ),
+  }));
+  return renderRoutes(address, routes, new QueryClient({ defaultOptions: { queries: { retry: false } } }));
+}
+
+/** Shows routes with the frame that they bring themselves. */
+export function renderRoutes(address: string, routes: RouteObject[], client: QueryClient) {
+  const router = createMemoryRouter(routes, { initialEntries: [address] });
   render(
     <QueryClientProvider client={client}>
       <RouterProvider router={router} />
