@@ -63,13 +63,18 @@ export function answerProblems(log: Surroundings["log"]): ErrorRequestHandler {
   };
 }
 
-/** The body parser's errors carry a type; anything else is ours or unforeseen. */
+/** The body parser's errors carry a type, the router's and the file server's a status; the rest is unforeseen. */
 function toProblem(error: unknown): ProblemError {
   if (error instanceof ProblemError) return error;
   const type = error instanceof Error && "type" in error ? error.type : null;
+  const status = error instanceof Error && "status" in error ? Number(error.status) : 500;
   if (type === "entity.parse.failed") return new ProblemError(400, "bad_json", "The body is not valid JSON.");
-  if (type === "entity.too.large") return new ProblemError(413, "too_large", "The body is too large.");
   if (error instanceof URIError) return new ProblemError(400, "bad_path", "The address can't be read.");
+  if (status === 413) return new ProblemError(413, "too_large", "The body is too large.");
+  if (status === 415) return new ProblemError(415, "not_json", "Send JSON in UTF-8, plain or gzipped.");
+  if (status === 404) return notFound("This file");
+  if (status >= 400 && status < 500)
+    return new ProblemError(400, "bad_request", "The request can't be read.");
   return new ProblemError(
     500,
     "unforeseen",

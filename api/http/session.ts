@@ -90,6 +90,12 @@ export function createSessions(db: Database, environment: Environment, clock: ()
       return session?.signedInAt ?? clock();
     },
 
+    /** Ends the session that a request came with, if any. */
+    async endCarried(cookieHeader: string): Promise<void> {
+      const sessionId = lucia.readSessionCookie(cookieHeader);
+      if (sessionId) await lucia.invalidateSession(sessionId);
+    },
+
     /** Ends a session and returns a cookie that clears the browser's. */
     async end(sessionId: string): Promise<string> {
       await lucia.invalidateSession(sessionId);

@@ -10,8 +10,8 @@ export const identityRoutes = [
     tag: "Sign-in",
     summary: "Start a session; the cookie comes with the answer",
     body: signInSchema,
-    handle: async (context, { body }, { response }) => {
-      response.append("set-cookie", await signIn(context, body));
+    handle: async (context, { body }, { request, response }) => {
+      response.append("set-cookie", await signIn(context, body, request.get("cookie") ?? ""));
       return undefined;
     },
   }),

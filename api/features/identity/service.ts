@@ -8,30 +8,41 @@ import { isMember, selectFirstTeam, selectTeamsOf, selectUserByEmail } from "./q
 /**
  * Signs a person in, for the team they joined first.
  *
+ * @param cookieHeader what the browser came with: the session in it ends, as the new one takes its place
  * @returns the session cookie
  * @throws the same problem for a wrong password and for an address without an account
  */
-export async function signIn(context: Context, { email, password }: SignIn): Promise<string> {
+export async function signIn(
+  context: Context,
+  { email, password }: SignIn,
+  cookieHeader: string,
+): Promise<string> {
   const { db, clock, sessions, signInBackoff, log } = context;
   const address = email.trim().toLowerCase();
   const keys = [`account ${address}`, `address ${context.address}`];
-  const now = clock().getTime();
-  const wait = Math.max(...keys.map((key) => signInBackoff.waitFor(key, now)));
-  if (wait > 0) {
-    const seconds = Math.ceil(wait / 1000);
-    throw tooMany(`Too many tries. Wait ${seconds} s and try again.`, seconds);
-  }
+  refuseWhileWaiting(context, keys);
   const user = await selectUserByEmail(db, address);
   const matches = await checkPassword(user?.passwordHash, password);
   const teamId = user && matches ? await selectFirstTeam(db, user.id) : null;
+  // Guesses sent at once all passed the first look; no more of them may learn something than sent one by one.
+  refuseWhileWaiting(context, keys);
   if (!user || teamId === null) {
-    for (const key of keys) signInBackoff.fail(key, now);
+    for (const key of keys) signInBackoff.fail(key, clock().getTime());
     log.warn({ address: context.address, requestId: context.requestId }, "sign-in refused");
     throw unauthorised("wrong_credentials", "The e-mail address or the password is wrong.");
   }
   for (const key of keys) signInBackoff.succeed(key);
   log.info({ user: user.id, requestId: context.requestId }, "signed in");
+  await sessions.endCarried(cookieHeader);
   return sessions.start(user.id, { teamId, signedInAt: clock() });
+}
+
+function refuseWhileWaiting({ clock, signInBackoff }: Context, keys: readonly string[]): void {
+  const now = clock().getTime();
+  const wait = Math.max(...keys.map((key) => signInBackoff.waitFor(key, now)));
+  if (wait === 0) return;
+  const seconds = Math.ceil(wait / 1000);
+  throw tooMany(`Too many tries. Wait ${seconds} s and try again.`, seconds);
 }
 
 /** Ends the session and returns a cookie that clears the browser's. */

@@ -19,10 +19,7 @@ export function getStage({ db, actor }: SignedInContext, id: number): Promise<St
 /** Keeps a fit: the part's figures are frozen as they are now, whatever becomes of the catalog. */
 export async function keepStage(context: SignedInContext, input: KeepStage): Promise<Stage> {
   const { db, actor, clock } = context;
-  if ((input.brief.sourceResistor === "none") !== (input.resistors.rs === 0)) {
-    const message = "RS is 0 exactly where the brief asks for no source resistor";
-    throw invalid([{ path: "resistors.rs", message }]);
-  }
+  requireSourceResistor(input);
   const part = await getPart(context, input.partId);
   const brief = input.briefId === null ? null : await getBrief(context, input.briefId);
   const stage = {
@@ -42,7 +39,8 @@ export async function keepStage(context: SignedInContext, input: KeepStage): Pro
 /**
  * Renames a stage, notes something on it or changes its values.
  *
- * @throws a conflict that names what differs, when the version edited is no longer the latest
+ * @throws a conflict that names what differs, when the version edited is no longer the latest; a 422 problem for an RS
+ *   that the stage's brief rules out
  */
 export function saveStage(
   { db, actor, clock }: SignedInContext,
@@ -61,8 +59,16 @@ export function saveStage(
         current,
       );
     }
-    return readStage(transaction, actor.team.id, id);
+    const saved = await readStage(transaction, actor.team.id, id);
+    requireSourceResistor(saved);
+    return saved;
   });
+}
+
+function requireSourceResistor({ brief, resistors }: Pick<Stage, "brief" | "resistors">): void {
+  if ((brief.sourceResistor === "none") === (resistors.rs === 0)) return;
+  const message = "RS is 0 exactly where the brief asks for no source resistor";
+  throw invalid([{ path: "resistors.rs", message }]);
 }
 
 export async function deleteStage({ db, actor, clock }: SignedInContext, id: number): Promise<undefined> {
