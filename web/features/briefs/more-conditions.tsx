@@ -27,7 +27,7 @@ export function MoreConditions(props: ConditionsProps) {
           name="distortion.atPeak"
           label="at an output peak of"
           unit="V"
-          hint="Empty: the swing"
+          empty="the swing"
         />
       </Group>
       <Group title="Signal and source">
@@ -102,22 +102,24 @@ type QuantityProps = ConditionsProps & {
   unit: Unit;
   /** Empty is no answer. */
   required?: boolean;
-  hint?: string;
+  /** What an empty box stands for. */
+  empty?: string;
 };
 
-function Quantity({ form, onUnreadable, name, label, unit, required = false, hint }: QuantityProps) {
+function Quantity(props: QuantityProps) {
+  const { form, onUnreadable, name, label, unit, required = false, empty = "no limit" } = props;
   return (
     <Controller
       control={form.control}
       name={name}
       render={({ field, fieldState }) => (
-        <Field label={label} hint={hint} error={fieldState.error?.message}>
+        <Field label={label} error={fieldState.error?.message}>
           <QuantityInput
             unit={unit}
             value={typeof field.value === "number" ? field.value : null}
             onChange={(value) => field.onChange(value ?? undefined)}
             optional={!required}
-            placeholder={required ? undefined : "no limit"}
+            placeholder={required ? undefined : empty}
             onUnreadable={(message) => onUnreadable(name, message)}
           />
         </Field>

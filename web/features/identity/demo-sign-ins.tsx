@@ -1,15 +1,11 @@
+import { may, type Role } from "#shared/permissions";
 import type { DemoAccounts } from "#shared/schemas/identity";
 
 type DemoSignInsProps = { demo: DemoAccounts; onChoose: (email: string) => void };
 
-const WHAT_THEY_DO = {
-  owner: "manages people and seats",
-  designer: "writes briefs, keeps stages",
-  reviewer: "signs choices off",
-  librarian: "keeps the team's parts",
-  buyer: "prices and orders",
-  viewer: "looks, changes nothing",
-} as const;
+function whatTheyDo(role: Role): string {
+  return may([role], "design:write") ? "writes briefs, keeps stages" : "looks and tries, keeps nothing";
+}
 
 /** The people of the demo: one press signs in as one of them. */
 export function DemoSignIns({ demo, onChoose }: DemoSignInsProps) {
@@ -38,7 +34,7 @@ export function DemoSignIns({ demo, onChoose }: DemoSignInsProps) {
                       className="flex w-full flex-wrap items-baseline justify-between gap-x-4 py-2 text-left hover:bg-panel"
                     >
                       <span>{email}</span>
-                      <span className="text-quiet text-sm">{WHAT_THEY_DO[role]}</span>
+                      <span className="text-quiet text-sm">{whatTheyDo(role)}</span>
                     </button>
                   </li>
                 ))}
