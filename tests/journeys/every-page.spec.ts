@@ -13,6 +13,9 @@ const PAGES = [
   { path: "/nowhere", ready: "There is no page at this address." },
 ] as const;
 
+// Eight pages under an accessibility engine, four times over: minutes, when the machine is busy.
+test.describe.configure({ timeout: 240_000 });
+
 const VIEWS = [
   { width: 1440, scheme: "light" },
   { width: 1440, scheme: "dark" },
