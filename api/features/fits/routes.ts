@@ -39,8 +39,11 @@ export const fitRoutes = [
 /** Nobody waits for an answer whose connection is gone. */
 function abortWhenClosed(response: Response): AbortSignal {
   const controller = new AbortController();
-  response.once("close", () => {
+  const hangUp = () => {
     if (!response.writableFinished) controller.abort();
-  });
+  };
+  // The caller may have gone while the session was looked up, and that is told only once.
+  if (response.closed) hangUp();
+  else response.once("close", hangUp);
   return controller.signal;
 }
