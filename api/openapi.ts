@@ -85,11 +85,10 @@ export function serveDocumentation(routes: readonly Route[], basePath: string): 
     .generateHTML(document, options)
     .replace(/<style>[\s\S]*?<\/style>/g, "")
     .replace(/ style="[^"]*"/g, ' width="0" height="0"');
+  // The page's assets are relative to it: this also sends /docs on to /docs/.
   router.use("/docs", swaggerUi.serveFiles(document, options));
-  router.get("/docs", (request, response) => {
-    // The page's assets are relative to it.
-    if (!request.originalUrl.endsWith("/")) response.redirect(308, `${basePath}/docs/`);
-    else response.type("html").send(page);
+  router.get("/docs", (_request, response) => {
+    response.type("html").send(page);
   });
   return router;
 }
