@@ -13,18 +13,20 @@ const PAGES = [
   { path: "/nowhere", ready: "There is no page at this address." },
 ] as const;
 
-// Eight pages under an accessibility engine, four times over: minutes, when the machine is busy.
+// Eight pages under an accessibility engine: minutes, when the machine is busy.
 test.describe.configure({ timeout: 240_000 });
 
 const VIEWS = [
-  { width: 1440, scheme: "light" },
-  { width: 1440, scheme: "dark" },
-  { width: 390, scheme: "light" },
-  { width: 360, scheme: "dark" },
+  { width: 1440, scheme: "light", audited: true },
+  { width: 1440, scheme: "dark", audited: false },
+  { width: 390, scheme: "light", audited: false },
+  { width: 360, scheme: "dark", audited: true },
 ] as const;
 
-for (const { width, scheme } of VIEWS) {
-  test(`every page is accessible and fits ${width} px, ${scheme}`, async ({ browser }) => {
+for (const { width, scheme, audited } of VIEWS) {
+  test(`every page ${audited ? "is accessible and " : ""}fits ${width} px, ${scheme}`, async ({
+    browser,
+  }) => {
     const context = await browser.newContext({ viewport: { width, height: 900 }, colorScheme: scheme });
     const page = await context.newPage();
     const complaints: string[] = [];
@@ -40,6 +42,7 @@ for (const { width, scheme } of VIEWS) {
       await expect(page.getByText(ready).filter({ visible: true }).first()).toBeVisible();
       const overflow = await page.evaluate(() => document.documentElement.scrollWidth - window.innerWidth);
       expect(overflow, `${path} is wider than the window`).toBeLessThanOrEqual(0);
+      if (!audited) continue;
       const { violations } = await new AxeBuilder({ page })
         .withTags(["wcag2a", "wcag2aa", "wcag21a", "wcag21aa", "wcag22aa"])
         .analyze();

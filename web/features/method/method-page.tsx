@@ -118,7 +118,7 @@ function Contents() {
 
 function ContentsLink({ id, children }: { id: string; children: string }) {
   return (
-    <a href={`#${id}`} className="underline-offset-3 hover:text-ink hover:underline">
+    <a href={`#${id}`} className="block py-0.5 underline-offset-3 hover:text-ink hover:underline">
       {children}
     </a>
   );
