@@ -92,6 +92,18 @@ describe("walking the catalog", () => {
     const { body } = await agent.get(`${BASE}/parts`).query({ cursor }).expect(422);
     expect(body.errors.map(({ path }: { path: string }) => path)).toEqual(["cursor"]);
   });
+
+  it.each([
+    [{ limit: 0 }, "limit"],
+    [{ limit: 201 }, "limit"],
+    [{ limit: "" }, "limit"],
+    [{ limit: "ten" }, "limit"],
+    [{ polarity: "x" }, "polarity"],
+    [{ teamId: 1 }, "teamId"],
+  ])("refuses %j at the field", async (query, path) => {
+    const { body } = await agent.get(`${BASE}/parts`).query(query).expect(422);
+    expect(body.errors.map((error: { path: string }) => error.path)).toEqual([path]);
+  });
 });
 
 describe("looking for a part", () => {

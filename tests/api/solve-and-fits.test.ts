@@ -5,7 +5,6 @@ import { afterAll, beforeAll, describe, expect, it } from "vitest";
 import { type FitsResponse, fitsEventSchema, fitsResponseSchema } from "#shared/schemas/fits";
 import type { Part } from "#shared/schemas/part";
 import { valuesBetween } from "#shared/values/e-series";
-import { routes } from "../../api/app";
 import { resistorOrderables } from "../../api/db/schema/orderables";
 import { closePool } from "../../api/ranking/pool";
 import published from "../reference/checks/published.json";
@@ -44,48 +43,6 @@ beforeAll(async () => {
 afterAll(async () => {
   await closePool();
   await api.stop();
-});
-
-describe("the list of parts", () => {
-  it("walks every part exactly once, in part-number order", async () => {
-    const seen: Part[] = [];
-    let cursor: string | null = null;
-    do {
-      const query: Record<string, string> = { limit: "7", ...(cursor === null ? {} : { cursor }) };
-      const { body } = await designer.get(`${BASE}/parts`).query(query).expect(200);
-      seen.push(...body.items);
-      cursor = body.nextCursor;
-    } while (cursor !== null);
-    const expected = [...catalog].sort((a, b) => (a.partNumber < b.partNumber ? -1 : 1));
-    expect(seen).toEqual(expected);
-  });
-
-  it("filters by polarity, package and text, in which % and _ stand for themselves", async () => {
-    const list = async (query: object) =>
-      (
-        await designer
-          .get(`${BASE}/parts`)
-          .query({ limit: 200, ...query })
-          .expect(200)
-      ).body.items as Part[];
-    const p = catalog.filter(({ polarity }) => polarity === "p");
-    expect((await list({ polarity: "p" })).length).toBe(p.length);
-    expect(await list({ package: "TO-92" })).toEqual([]);
-    expect((await list({ q: catalog[3].partNumber })).map(({ id }) => id)).toContain(catalog[3].id);
-    expect(await list({ q: "%" })).toEqual([]);
-    expect(await list({ q: "_" })).toEqual([]);
-  });
-
-  it.each([
-    [{ limit: 0 }, "limit"],
-    [{ limit: 201 }, "limit"],
-    [{ polarity: "x" }, "polarity"],
-    [{ cursor: "nonsense" }, "cursor"],
-    [{ teamId: 1 }, "teamId"],
-  ])("refuses %j at the field", async (query, path) => {
-    const { body } = await designer.get(`${BASE}/parts`).query(query).expect(422);
-    expect(body.errors[0].path).toBe(path);
-  });
 });
 
 describe("POST /bias/solve", () => {
@@ -282,25 +239,6 @@ describe("POST /fits", () => {
     expect(await refused({ brief: SMALL_BRIEF, distinct: "maker" })).toEqual(["distinct"]);
     expect(await refused({ brief: SMALL_BRIEF, limit: 0 })).toEqual(["limit"]);
     expect(await refused({})).toEqual(["brief"]);
-  });
-});
-
-describe("the API's own description", () => {
-  it("is OpenAPI 3.1 and has every route", async () => {
-    const { body } = await supertest(api.app).get(`${BASE}/openapi.json`).expect(200);
-    expect(body.openapi).toBe("3.1.0");
-    for (const { method, path } of routes) {
-      const entry = body.paths[path.replace(/:(\w+)/g, "{$1}")]?.[method];
-      expect(entry?.summary, `${method} ${path}`).toBeTruthy();
-    }
-  });
-
-  it("is a readable page from local assets, without inline scripts or styles", async () => {
-    const page = await supertest(api.app).get(`${BASE}/docs/`).expect(200);
-    expect(page.text).not.toMatch(/<style|style="|<script>(?!\s*<\/script>)|(?:src|href)="https?:/);
-    const assets = [...page.text.matchAll(/(?:src|href)="\.\/([^"]+)"/g)].map(([, file]) => file);
-    expect(assets.length).toBeGreaterThan(2);
-    for (const asset of assets) await supertest(api.app).get(`${BASE}/docs/${asset}`).expect(200);
   });
 });
 
