@@ -11,7 +11,7 @@ export const fitsRequestSchema = z.strictObject({
   brief: briefSchema,
   objective: z.enum(OBJECTIVES, { error: 'Rank by "centred"' }).default("centred"),
   distinct: z.enum(DISTINCTS, { error: 'Distinct is "part" or "none"' }).default("part"),
-  limit: z.int().min(1, "At least one").max(5000, "At most 5,000").default(100),
+  limit: z.int().min(1, "At least one").max(20_000, "At most 20,000").default(100),
 });
 
 /** Why a part has no fit: the filter or rating that bars it, or the furthest condition any of its combinations reached. */
