@@ -97,9 +97,9 @@ function Contents() {
         {SECTIONS.map(({ id, title, entries }) => (
           <li key={id}>
             <ContentsLink id={id}>{title}</ContentsLink>
-            <ol className="mt-0.5 hidden flex-col text-quiet lg:flex">
+            <ol className="hidden flex-col text-quiet lg:flex">
               {entries.map((entry) => (
-                <li key={entry.id} className="py-px">
+                <li key={entry.id}>
                   <ContentsLink id={entry.id}>{entry.title}</ContentsLink>
                 </li>
               ))}
