@@ -1,40 +1,13 @@
 import { screen, within } from "@testing-library/react";
-import { HttpResponse, http } from "msw";
 import { describe, expect, it } from "vitest";
-import { briefSchema } from "#shared/schemas/brief";
 import { CAUTION_CODES } from "#shared/schemas/caution";
-import type { Stage } from "#shared/schemas/stage";
 import { MethodPage } from "../../../web/features/method/method-page";
 import { formulaInWords, parseFormula } from "../../../web/features/method/parse-formula";
-import { StagePage } from "../../../web/features/stages/stage-page";
-import { buildPart } from "../../support/build-part";
 import { renderAt } from "../support/render";
-import { API, playServer, server, signedInAs } from "../support/server";
+import { playServer, signedInAs } from "../support/server";
+import { BRIEF, buildStage, PAGES, playStage } from "../support/stages";
 
 playServer();
-
-const someone = { id: "u1", name: "S. Omeone" };
-
-const STAGE: Stage = {
-  id: 4,
-  name: "First stage",
-  note: "",
-  version: 1,
-  part: buildPart(),
-  resistors: { r1: 1.8e6, r2: 750e3, rd: 2700, rs: 1200 },
-  brief: briefSchema.parse({
-    rail: { volts: 12 },
-    load: { ohms: 10e3 },
-    swing: { peak: 1 },
-    distortion: { max: 0.05 },
-    ambient: { min: 0, max: 50 },
-  }),
-  origin: null,
-  createdBy: someone,
-  updatedBy: someone,
-  createdAt: "2026-11-02T09:00:00.000Z",
-  updatedAt: "2026-11-03T09:00:00.000Z",
-};
 
 describe("the method page", () => {
   it("can be read signed out, without asking the server anything", () => {
@@ -47,8 +20,8 @@ describe("the method page", () => {
 
   it("explains every figure that a stage's sheet links to", async () => {
     signedInAs("designer");
-    server.use(http.get(`${API}/stages/4`, () => HttpResponse.json(STAGE)));
-    renderAt("/stages/4", { "/stages/:id": <StagePage /> });
+    playStage(buildStage({ brief: { ...BRIEF, distortion: { max: 0.05 } } }));
+    renderAt("/stages/4", PAGES);
     await screen.findByRole("link", { name: "Gain" });
     const ids = screen
       .getAllByRole("link")

@@ -1,114 +1,23 @@
-import { configure, screen, waitFor, within } from "@testing-library/react";
+import { screen, waitFor, within } from "@testing-library/react";
 import { HttpResponse, http } from "msw";
 import { describe, expect, it } from "vitest";
-import { type Brief, briefSchema } from "#shared/schemas/brief";
-import type { KeepStage, Stage, UpdateStage } from "#shared/schemas/stage";
-import { NewStagePage } from "../../../web/features/stages/new-stage-page";
-import { StagePage } from "../../../web/features/stages/stage-page";
-import { StagesPage } from "../../../web/features/stages/stages-page";
-import { stageLink } from "../../../web/lib/stage-link";
-import { buildPart } from "../../support/build-part";
 import { renderAt } from "../support/render";
 import { API, playServer, server, signedInAs } from "../support/server";
+import {
+  BRIEF,
+  buildStage,
+  figure,
+  PAGES,
+  PART,
+  playStage,
+  playStaleStage,
+  RESISTORS,
+  rename,
+  shown,
+  step,
+} from "../support/stages";
 
 playServer();
-// A whole sheet has many roles to look through, which takes a loaded machine more than the usual second.
-configure({ asyncUtilTimeout: 5000 });
-
-const BRIEF: Brief = briefSchema.parse({
-  rail: { volts: 12 },
-  load: { ohms: 10e3 },
-  swing: { peak: 1 },
-  ambient: { min: 0, max: 50 },
-});
-const PART = buildPart();
-const RESISTORS = { r1: 1.8e6, r2: 750e3, rd: 2700, rs: 1200 };
-
-function buildStage(overrides: Partial<Stage> = {}): Stage {
-  const someone = { id: "u1", name: "S. Omeone" };
-  return {
-    id: 4,
-    name: "First stage",
-    note: "Mind the cold.",
-    version: 3,
-    part: PART,
-    resistors: RESISTORS,
-    brief: BRIEF,
-    origin: { briefId: 7, briefName: "First brief", briefVersion: 2 },
-    createdBy: someone,
-    updatedBy: someone,
-    createdAt: "2026-11-02T09:00:00.000Z",
-    updatedAt: "2026-11-03T09:00:00.000Z",
-    ...overrides,
-  };
-}
-
-const PAGES = { "/stages/:id": <StagePage />, "/stages": <StagesPage /> };
-
-/** Plays one kept stage; answers each save with the next version. */
-function playStage(stage = buildStage()): UpdateStage[] {
-  const saved: UpdateStage[] = [];
-  server.use(
-    http.get(`${API}/stages/4`, () => HttpResponse.json(stage)),
-    http.put(`${API}/stages/4`, async ({ request }) => {
-      const change = (await request.json()) as UpdateStage;
-      saved.push(change);
-      return HttpResponse.json({ ...stage, ...change, version: change.version + 1 });
-    }),
-  );
-  return saved;
-}
-
-/** Plays a stage that R. Other has changed since it was opened: only an edit of their version is taken. */
-function playStaleStage(theirs: Partial<Stage>): UpdateStage[] {
-  const saved = playStage();
-  const current = buildStage({ ...theirs, version: 4 });
-  server.use(
-    http.put(`${API}/stages/4`, async ({ request }) => {
-      const change = (await request.json()) as UpdateStage;
-      saved.push(change);
-      if (change.version === 4) return HttpResponse.json({ ...current, ...change, version: 5 });
-      const problem = {
-        type: "about:blank",
-        title: "Changed meanwhile",
-        status: 409,
-        code: "stage.version_conflict",
-        detail: "R. Other changed this stage meanwhile.",
-        errors: [],
-        current,
-      };
-      return HttpResponse.json(problem, { status: 409 });
-    }),
-  );
-  return saved;
-}
-
-async function rename(user: User, name: string) {
-  await user.click(await screen.findByRole("button", { name: /rename/ }));
-  const box = within(await screen.findByRole("dialog")).getByLabelText("Name");
-  await user.clear(box);
-  await user.type(box, name);
-  await user.click(screen.getByRole("button", { name: "Save" }));
-}
-
-/** The value that a resistor's stepper shows. */
-function shown(resistor: string): string | null {
-  return within(screen.getByRole("group", { name: resistor })).getByRole("status").textContent;
-}
-
-/** The figure beside a name on the sheet. */
-async function figure(name: string): Promise<string> {
-  const link = await screen.findByRole("link", { name });
-  return link.closest("dt")?.nextElementSibling?.textContent ?? "";
-}
-
-type User = ReturnType<typeof renderAt>["user"];
-
-async function step(user: User, name: string, way: "higher" | "lower") {
-  const group = await screen.findByRole("group", { name });
-  await user.click(within(group).getByRole("button", { name: new RegExp(`^${name} ${way}`) }));
-  return within(group).getByRole("status").textContent;
-}
 
 /**
  * Without channel-length modulation: with x the overdrive, VG - VT = x + RS K x², whose positive root gives ID = K x².
@@ -322,76 +231,6 @@ describe("changing a kept stage", () => {
     await user.click(await screen.findByRole("button", { name: "Undo" }));
     expect(await screen.findByText("First stage")).toBeTruthy();
     expect(calls).toEqual(["delete", "restore"]);
-  });
-});
-
-describe("a fit that isn't kept", () => {
-  const address = stageLink({
-    partId: 1,
-    resistors: RESISTORS,
-    brief: BRIEF,
-    briefId: null,
-    place: 2,
-  });
-  const pages = { "/stages/new": <NewStagePage />, ...PAGES };
-
-  function playFit(): KeepStage[] {
-    const kept: KeepStage[] = [];
-    server.use(
-      http.get(`${API}/parts/1`, () => HttpResponse.json(PART)),
-      http.get(`${API}/briefs`, () => HttpResponse.json({ items: [] })),
-      http.post(`${API}/stages`, async ({ request }) => {
-        const input = (await request.json()) as KeepStage;
-        kept.push(input);
-        return HttpResponse.json(buildStage({ name: input.name }), { status: 201 });
-      }),
-    );
-    return kept;
-  }
-
-  it("has the same sheet, and stepping it moves the address along", async () => {
-    signedInAs("viewer");
-    playFit();
-    const { user, router } = renderAt(address, pages);
-    expect(await figure("Drain current")).toBe("1.62 mA");
-    await step(user, "R2", "higher");
-    expect(await figure("Drain current")).toBe("1.79 mA");
-    const search = new URLSearchParams(router.state.location.search);
-    expect([search.get("r2"), search.get("fit")]).toEqual(["820000", null]);
-    expect(screen.queryByRole("button", { name: /keep/i })).toBeNull();
-  });
-
-  it("is kept with the values as stepped and the brief it was ranked for", async () => {
-    signedInAs("designer");
-    playStage();
-    const kept = playFit();
-    const { user, router } = renderAt(address, pages);
-    await step(user, "R2", "higher");
-    await user.click(screen.getByRole("button", { name: "Keep this stage" }));
-    const dialog = await screen.findByRole("dialog");
-    const name = within(dialog).getByLabelText("Name");
-    await user.clear(name);
-    await user.click(within(dialog).getByRole("button", { name: "Keep it" }));
-    expect(await within(dialog).findByText("Give the stage a name")).toBeTruthy();
-    await user.type(name, "Board A");
-    await user.click(within(dialog).getByRole("button", { name: "Keep it" }));
-    await waitFor(() => expect(router.state.location.pathname).toBe("/stages/4"));
-    expect(kept).toEqual([
-      {
-        name: "Board A",
-        note: "",
-        partId: 1,
-        resistors: { ...RESISTORS, r2: 820e3 },
-        brief: BRIEF,
-        briefId: null,
-      },
-    ]);
-  });
-
-  it("says so when the address holds none", async () => {
-    signedInAs("designer");
-    renderAt("/stages/new?part=1&r1=many", pages);
-    expect(await screen.findByText("This address doesn't hold a fit.")).toBeTruthy();
   });
 });
 

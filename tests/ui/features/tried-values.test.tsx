@@ -1,40 +1,15 @@
 import { screen, within } from "@testing-library/react";
-import { HttpResponse, http } from "msw";
 import { describe, expect, it } from "vitest";
-import { briefSchema } from "#shared/schemas/brief";
-import type { Stage, UpdateStage } from "#shared/schemas/stage";
-import { StagePage } from "../../../web/features/stages/stage-page";
-import { buildPart } from "../../support/build-part";
 import { renderAt } from "../support/render";
-import { API, playServer, server, signedInAs } from "../support/server";
+import { playServer, signedInAs } from "../support/server";
+import { PAGES, playStage } from "../support/stages";
 
 playServer();
 
-const someone = { id: "u1", name: "S. Omeone" };
-const STAGE: Stage = {
-  id: 4,
-  name: "First stage",
-  note: "",
-  version: 3,
-  part: buildPart(),
-  resistors: { r1: 1.8e6, r2: 750e3, rd: 2700, rs: 1200 },
-  brief: briefSchema.parse({ rail: { volts: 12 }, load: { ohms: 10e3 } }),
-  origin: null,
-  createdBy: someone,
-  updatedBy: someone,
-  createdAt: "2026-11-02T09:00:00.000Z",
-  updatedAt: "2026-11-03T09:00:00.000Z",
-};
-
+/** A kept stage with R2 at 750 kΩ, opened at an address. */
 function openAt(search: string) {
-  server.use(
-    http.get(`${API}/stages/4`, () => HttpResponse.json(STAGE)),
-    http.put(`${API}/stages/4`, async ({ request }) => {
-      const change = (await request.json()) as UpdateStage;
-      return HttpResponse.json({ ...STAGE, ...change, version: change.version + 1 });
-    }),
-  );
-  return renderAt(`/stages/4${search}`, { "/stages/:id": <StagePage /> });
+  playStage();
+  return renderAt(`/stages/4${search}`, PAGES);
 }
 
 async function valueShown(name: string) {
