@@ -32,6 +32,8 @@ export type RankingOutcome = {
 };
 
 const KEPT_TABLES = 8;
+/** The clock is dear beside a block of lines, so it is not read for each. */
+const ASKED_PER_LOOK_AT_CLOCK = 256;
 const tables = new Map<string, RatioTable>();
 let prepared: { searchId: string; search: Search } | null = null;
 
@@ -65,7 +67,9 @@ function prepare({ searchId, problem, cancelled, deadline }: RankingTask): Searc
     if (tables.size >= KEPT_TABLES) tables.delete(tables.keys().next().value as string);
     tables.set(key, table);
   }
-  const shouldStop = () => Atomics.load(cancelled, 0) === 1 || Date.now() > deadline;
+  let asked = 0;
+  const shouldStop = () =>
+    Atomics.load(cancelled, 0) === 1 || (++asked % ASKED_PER_LOOK_AT_CLOCK === 0 && Date.now() > deadline);
   prepared = { searchId, search: new Search(problem, table, shouldStop) };
   return prepared.search;
 }
