@@ -1,8 +1,8 @@
 import { figureStage, type StageFigures } from "./bias/stage-sheet";
 import type { Brief } from "./schemas/brief";
 import type { Caution, CautionCode } from "./schemas/caution";
+import type { Resistors } from "./schemas/circuit";
 import type { Part } from "./schemas/part";
-import type { Resistors } from "./schemas/stage";
 import { formatQuantity } from "./values/engineering";
 
 /** Above this a d.c. rail is not touch-safe: 60 V, the limit that common product-safety standards set for ripple-free d.c. */

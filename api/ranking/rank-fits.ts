@@ -1,3 +1,4 @@
+import { assuredSwing, boxOf } from "#shared/bias/spread";
 import { figureSignal, figureStage } from "#shared/bias/stage-sheet";
 import { cautionsFor } from "#shared/cautions";
 import type { Brief } from "#shared/schemas/brief";
@@ -50,7 +51,7 @@ export async function rankFits(
 }
 
 function presentFit(part: Part, brief: Brief, { r1, r2, rd, rs }: Candidate): Fit {
-  const resistors = { r1, r2, rd, rs };
+  const resistors = { r1, r2, rg: 0, rd, rs, rs2: 0 };
   const figures = figureStage(part, brief, resistors);
   return {
     part: {
@@ -68,7 +69,7 @@ function presentFit(part: Part, brief: Brief, { r1, r2, rd, rs }: Candidate): Fi
     bias: figures.bias,
     supplyCurrent: figures.supplyCurrent,
     ...figureSignal(part, brief, figures),
-    assured: null,
+    assured: assuredSwing(boxOf(part, brief, figures.values)).swing,
     cost: null,
     cautions: cautionsFor(part, brief, resistors),
   };

@@ -17,6 +17,8 @@ const WORDS: Record<PassedOverReason, (brief: Brief) => string> = {
   "rail-rating": (brief) =>
     `The ${quantity(brief.rail.volts, "V")} rail is above ${formatPercent(brief.derating.vds, 0)} of the drain-source rating.`,
   swing: (brief) => `No resistors give ${quantity(brief.swing.peak, "V")} peak both ways.`,
+  "assured-swing": (brief) =>
+    `No stage still swings ${quantity(brief.swing.peak, "V")} peak in every build of the spread.`,
   "supply-current": (brief) =>
     `Every stage that swings far enough draws more than ${quantity(brief.supplyCurrent.max, "A")}.`,
   "source-drop": (brief) => `The drop across RS stays below ${quantity(brief.sourceDrop.min, "V")}.`,

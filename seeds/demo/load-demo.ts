@@ -2,6 +2,7 @@ import { eq } from "drizzle-orm";
 import { DEMO_PASSWORD, DEMO_TEAMS } from "#shared/demo";
 import { ROLES } from "#shared/permissions";
 import { briefSchema } from "#shared/schemas/brief";
+import { pickResistors } from "#shared/schemas/circuit";
 import type { Database, Transaction } from "../../api/db/client";
 import { users } from "../../api/db/schema/identity";
 import { membershipRoles, memberships, teams } from "../../api/db/schema/teams";
@@ -76,11 +77,10 @@ async function insertStory(
   const best = fits.find(({ cautions }) => cautions.every(({ code }) => code !== "low-overdrive"));
   const part = parts.find(({ id }) => id === best?.part.id);
   if (!best || !part) throw new Error(`Nothing in the catalog fits the demo brief "${story.name}"`);
-  const { r1, r2, rd, rs } = best;
   const stage = {
     ...story.stage,
     part,
-    resistors: { r1, r2, rd, rs },
+    resistors: pickResistors(best),
     brief,
     origin: { briefId, briefName: story.name, briefVersion: 1 },
   };

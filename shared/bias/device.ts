@@ -56,6 +56,11 @@ export function conductances(device: SquareLaw, vgs: number, vds: number): { gm:
   };
 }
 
+/** A temperature in °C as kelvin. */
+export function kelvin(celsius: number): number {
+  return celsius + KELVIN_AT_ZERO_CELSIUS;
+}
+
 /**
  * A threshold at another temperature: it falls by its coefficient per kelvin.
  *
@@ -75,7 +80,7 @@ export function thresholdAt(vt25: number, tcVt: number, celsius: number): number
  * @param celsius °C, above absolute zero
  */
 export function conductionAt(k25: number, celsius: number): number {
-  return k25 * ((celsius + KELVIN_AT_ZERO_CELSIUS) / REFERENCE_KELVIN) ** -1.5;
+  return k25 * (kelvin(celsius) / REFERENCE_KELVIN) ** -1.5;
 }
 
 /** The typical device of a part at an ambient temperature in °C. */

@@ -1,18 +1,13 @@
 import type { Part } from "#shared/schemas/part";
+import type { SignalNodes } from "./circuits/circuit";
 import { findRoot } from "./find-root";
 
 /** The small-signal circuit of a stage above its low corner, SI units. */
-export type SmallSignalStage = {
+export type SmallSignalStage = SignalNodes & {
   gm: number;
   gds: number;
-  /** The a.c. load at the drain, ohms. */
-  load: number;
-  /** The part of the source resistor that carries signal, ohms; 0 where bypassed. */
-  degeneration: number;
   /** Source impedance ahead of the input, ohms; 0 drives the gate directly. */
   sourceImpedance: number;
-  /** What the gate's bias network loads the source with, ohms. */
-  inputResistance: number;
 };
 
 export type Capacitances = { cgs: number; cgd: number; cds: number };
@@ -52,7 +47,7 @@ export function millerPoles(
   const drive =
     stage.sourceImpedance === 0
       ? 0
-      : (stage.sourceImpedance * stage.inputResistance) / (stage.sourceImpedance + stage.inputResistance);
+      : (stage.sourceImpedance * stage.gate) / (stage.sourceImpedance + stage.gate);
   const pole = (resistance: number, capacitance: number) =>
     resistance > 0 && capacitance > 0 ? 1 / (2 * Math.PI * resistance * capacitance) : null;
   return {
@@ -62,7 +57,7 @@ export function millerPoles(
 }
 
 /**
- * Squared magnitude of the transfer from source to drain at one frequency: nodal analysis of gate, drain and source,
+ * Squared magnitude of the transfer from source to output at one frequency: nodal analysis of gate, drain and source,
  * solved by elimination with real and imaginary parts written out.
  *
  * @param frequency Hz; 0 gives the mid-band value
@@ -72,7 +67,8 @@ export function transferSquared(
   capacitances: Capacitances,
   frequency: number,
 ): number {
-  const { gm, gds, load, degeneration, sourceImpedance, inputResistance } = stage;
+  const { gm, gds, drain, source, gate, feedback, output, sourceImpedance } = stage;
+  const gfb = feedback === null ? 0 : 1 / feedback;
   const omega = 2 * Math.PI * frequency;
   const bgs = omega * capacitances.cgs;
   const bgd = omega * capacitances.cgd;
@@ -82,8 +78,8 @@ export function transferSquared(
   let aIm = 0;
   let bRe = 0;
   let bIm = 0;
-  if (degeneration > 0) {
-    const yRe = 1 / degeneration + gm + gds;
+  if (source > 0) {
+    const yRe = 1 / source + gm + gds;
     const yIm = bgs + bds;
     const norm = yRe * yRe + yIm * yIm;
     aRe = (gm * yRe + bgs * yIm) / norm;
@@ -91,22 +87,26 @@ export function transferSquared(
     bRe = (gds * yRe + bds * yIm) / norm;
     bIm = (bds * yRe - gds * yIm) / norm;
   }
-  // Drain node: (1/rL + gds + j(bgd + bds)) vd = (j bgd - gm) vg + (gm + gds + j bds) vs.
-  const sRe = gm + gds;
-  const leftRe = 1 / load + gds - (sRe * bRe - bds * bIm);
-  const leftIm = bgd + bds - (sRe * bIm + bds * bRe);
-  const rightRe = -gm + (sRe * aRe - bds * aIm);
-  const rightIm = bgd + (sRe * aIm + bds * aRe);
-  const leftNorm = leftRe * leftRe + leftIm * leftIm;
-  const hRe = (rightRe * leftRe + rightIm * leftIm) / leftNorm;
-  const hIm = (rightIm * leftRe - rightRe * leftIm) / leftNorm;
-  const squared = hRe * hRe + hIm * hIm;
+  // Drain node: (1/rD + gfb + gds + j(bgd + bds)) vd = (gfb + j bgd - gm) vg + (gm + gds + j bds) vs.
+  let dRe = 0;
+  let dIm = 0;
+  if (drain > 0) {
+    const sRe = gm + gds;
+    const leftRe = 1 / drain + gfb + gds - (sRe * bRe - bds * bIm);
+    const leftIm = bgd + bds - (sRe * bIm + bds * bRe);
+    const rightRe = gfb - gm + (sRe * aRe - bds * aIm);
+    const rightIm = bgd + (sRe * aIm + bds * aRe);
+    const leftNorm = leftRe * leftRe + leftIm * leftIm;
+    dRe = (rightRe * leftRe + rightIm * leftIm) / leftNorm;
+    dIm = (rightIm * leftRe - rightRe * leftIm) / leftNorm;
+  }
+  const vsRe = aRe + bRe * dRe - bIm * dIm;
+  const vsIm = aIm + bRe * dIm + bIm * dRe;
+  const squared = output === "drain" ? dRe * dRe + dIm * dIm : vsRe * vsRe + vsIm * vsIm;
   if (sourceImpedance === 0) return squared;
-  // Gate node: what flows from the source goes into the divider, Cgs and Cgd.
-  const vsRe = aRe + bRe * hRe - bIm * hIm;
-  const vsIm = aIm + bRe * hIm + bIm * hRe;
-  const inRe = 1 / inputResistance + bgs * vsIm + bgd * hIm;
-  const inIm = bgs * (1 - vsRe) + bgd * (1 - hRe);
+  // Gate node: what flows in goes into the bias network, Cgs, Cgd and what the drain feeds back.
+  const inRe = 1 / gate + bgs * vsIm + bgd * dIm + gfb * (1 - dRe);
+  const inIm = bgs * (1 - vsRe) + bgd * (1 - dRe) - gfb * dIm;
   const gRe = 1 + sourceImpedance * inRe;
   const gIm = sourceImpedance * inIm;
   return squared / (gRe * gRe + gIm * gIm);

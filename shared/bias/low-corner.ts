@@ -13,9 +13,17 @@ export type CapacitorResistances = {
 /** Farads; null where the stage has no such capacitor. */
 export type Capacitors = { input: number; output: number | null; bypass: number | null };
 
-/** What the source terminal shows with its resistor in parallel: RS || (ro + rL)/(1 + gm ro), ohms. */
-export function resistanceAtSource(gm: number, gds: number, load: number, rs: number): number {
-  return 1 / (1 / rs + (gm + gds) / (1 + gds * load));
+/**
+ * What a bypass capacitor sees across its resistor: the resistor in parallel with what the source terminal shows,
+ * (ro + rL)/(1 + gm ro), behind any resistance that stays in the signal's way.
+ *
+ * @param load the a.c. load at the drain, ohms
+ * @param rs the bypassed resistor, ohms
+ * @param series between the source terminal and the capacitor, ohms
+ * @returns ohms
+ */
+export function resistanceAtSource(gm: number, gds: number, load: number, rs: number, series = 0): number {
+  return 1 / (1 / rs + 1 / (series + (1 + gds * load) / (gm + gds)));
 }
 
 /** Squared response relative to mid-band: two coupling zeros at 0 Hz, and the bypass pole with its zero. */

@@ -1,11 +1,15 @@
 import type { Bias, Device, Distortion, StageValues } from "#shared/schemas/bias";
 import type { Brief } from "#shared/schemas/brief";
+import { RESISTOR_KEYS, type Resistors } from "#shared/schemas/circuit";
 import type { Part } from "#shared/schemas/part";
-import type { Resistors } from "#shared/schemas/stage";
-import { acResistances, signalPath, solveFourResistor } from "./circuits/four-resistor/solve";
+import type { NodeVoltages } from "./circuits/circuit";
+import { circuitOf } from "./circuits/registry";
 import { typicalDevice } from "./device";
 import { highCorner, terminalCapacitances } from "./high-corner";
-import { type Capacitors, resistanceAtSource, smallestCapacitors } from "./low-corner";
+import { type Capacitors, smallestCapacitors } from "./low-corner";
+import type { Network } from "./network";
+import { solveStage } from "./solve-stage";
+import { type Assured, assuredSwing, boxOf } from "./spread";
 import { junctionTemperature, permittedDissipation } from "./thermal";
 import { distortionAt, linearSwing } from "./wave";
 
@@ -13,12 +17,13 @@ import { distortionAt, linearSwing } from "./wave";
 export type StageFigures = {
   device: Device;
   values: StageValues;
+  network: Network;
   bias: Bias;
-  /** Drain and divider current together, A. */
+  /** What the stage takes from its positive rail, A. */
   supplyCurrent: number;
   /** Voltages at gate, source and drain against the stage's ground, V (magnitudes from the common rail). */
-  nodes: { gate: number; source: number; drain: number };
-  /** What the resistors dissipate, W. */
+  nodes: NodeVoltages;
+  /** What the resistors dissipate, W; 0 where the circuit has none. */
   resistorPower: Resistors;
   /** The device's dissipation, what the derated rating allows (W), and the junction in still air (°C). */
   thermal: { power: number; permitted: number; junction: number };
@@ -39,12 +44,16 @@ export type StageSheet = StageFigures &
     capacitors: Capacitors | null;
     /** The largest output peak at the brief's distortion limit, V; null without a limit or without a swing. */
     linearSwing: number | null;
+    /** The room that every build inside the brief's spread has, V, whatever the sheet's temperature. */
+    assured: Assured;
   };
 
 /** The stage that a brief and four resistors make. */
 export function stageValues(brief: Brief, resistors: Resistors): StageValues {
   return {
+    circuit: brief.circuit,
     vdd: brief.rail.volts,
+    vss: brief.circuit === "negative-rail" ? (brief.rail.negative ?? brief.rail.volts) : 0,
     ...resistors,
     rl: brief.load.ohms,
     sourceBypassed: brief.sourceResistor !== "unbypassed",
@@ -64,20 +73,21 @@ export function distortionPeak(brief: Brief): number {
 export function figureStage(part: Part, brief: Brief, resistors: Resistors, celsius = 25): StageFigures {
   const values = stageValues(brief, resistors);
   const device = typicalDevice(part, celsius);
-  const bias = solveFourResistor(device, values);
-  const { vdd, r1, r2, rd, rs } = values;
+  const circuit = circuitOf(values.circuit);
+  const bias = solveStage(device, values);
+  const volts = circuit.resistorVoltages(values, bias.id);
+  const heat = (key: (typeof RESISTOR_KEYS)[number]) => {
+    const across = volts[key] ?? 0;
+    return values[key] > 0 ? across ** 2 / values[key] : 0;
+  };
   return {
     device,
     values,
+    network: circuit.network(values),
     bias,
-    supplyCurrent: bias.id + vdd / (r1 + r2),
-    nodes: { gate: bias.vg, source: bias.id * rs, drain: vdd - bias.id * rd },
-    resistorPower: {
-      r1: (vdd - bias.vg) ** 2 / r1,
-      r2: bias.vg ** 2 / r2,
-      rd: bias.id ** 2 * rd,
-      rs: bias.id ** 2 * rs,
-    },
+    supplyCurrent: circuit.supplyCurrent(values, bias.id),
+    nodes: circuit.nodes(values, bias.id),
+    resistorPower: Object.fromEntries(RESISTOR_KEYS.map((key) => [key, heat(key)])) as Resistors,
     thermal: {
       power: bias.power,
       permitted: brief.derating.power * permittedDissipation(part, celsius),
@@ -90,25 +100,22 @@ export function figureStage(part: Part, brief: Brief, resistors: Resistors, cels
 export function figureSignal(
   part: Part,
   brief: Brief,
-  { device, values, bias }: StageFigures,
+  { device, values, network, bias }: StageFigures,
 ): SignalFigures {
   const gain = Math.abs(bias.gain);
   if (gain === 0) return { highCorner: null, distortion: null };
-  const { load, degeneration } = acResistances(values);
   const peak = distortionPeak(brief);
   return {
     highCorner: highCorner(
       {
         gm: bias.gm,
         gds: bias.ro === null ? 0 : 1 / bias.ro,
-        load,
-        degeneration,
+        ...circuitOf(values.circuit).signalNodes(values),
         sourceImpedance: brief.source.ohms,
-        inputResistance: bias.inputResistance,
       },
       terminalCapacitances(part),
     ),
-    distortion: bias.swing && peak > 0 ? distortionAt(signalPath(device, values, bias), peak / gain) : null,
+    distortion: bias.swing && peak > 0 ? distortionAt({ device, q: bias, network }, peak / gain) : null,
   };
 }
 
@@ -119,31 +126,28 @@ export function figureSignal(
  */
 export function describeStage(part: Part, brief: Brief, resistors: Resistors, celsius = 25): StageSheet {
   const figures = figureStage(part, brief, resistors, celsius);
-  const { device, values, bias } = figures;
+  const { device, values, network, bias } = figures;
   const gain = Math.abs(bias.gain);
   const limit = brief.distortion.max;
   return {
     ...figures,
     ...figureSignal(part, brief, figures),
     capacitors: gain > 0 ? capacitorsFor(brief, figures) : null,
+    assured: assuredSwing(boxOf(part, brief, values)),
     linearSwing:
       bias.swing && gain > 0 && limit !== undefined
-        ? linearSwing(signalPath(device, values, bias), limit, gain, bias.swing.symmetric)
+        ? linearSwing({ device, q: bias, network }, limit, gain, bias.swing.symmetric)
         : null,
   };
 }
 
 function capacitorsFor(brief: Brief, { values, bias }: StageFigures): Capacitors {
-  const { load } = acResistances(values);
-  const gds = bias.ro === null ? 0 : 1 / bias.ro;
-  const bypass =
-    values.sourceBypassed && values.rs > 0
-      ? { rs: values.rs, seen: resistanceAtSource(bias.gm, gds, load, values.rs) }
-      : null;
-  const resistances = {
-    input: brief.source.ohms + bias.inputResistance,
-    output: values.rl === null ? null : bias.outputResistance + values.rl,
-    bypass,
-  };
+  const resistances = circuitOf(values.circuit).capacitorResistances(values, {
+    gm: bias.gm,
+    gds: bias.ro === null ? 0 : 1 / bias.ro,
+    inputResistance: bias.inputResistance,
+    outputResistance: bias.outputResistance,
+    sourceImpedance: brief.source.ohms,
+  });
   return smallestCapacitors(resistances, brief.lowCorner.hertz);
 }

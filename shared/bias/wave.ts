@@ -1,17 +1,14 @@
 import type { Distortion } from "#shared/schemas/bias";
 import { drainCurrent, type SquareLaw } from "./device";
 import { findRoot } from "./find-root";
+import type { Network } from "./network";
 import { saturationCurrent, saturationOverdrive } from "./saturation";
-import type { OutputPoint } from "./swing";
 
-/** What a signal meets at the Q-point: the device, where it sits, and the a.c. resistances around it. */
+/** What a signal meets at the Q-point: the device, where it sits, and the network around it. */
 export type SignalPath = {
   device: SquareLaw;
-  q: OutputPoint & { vgs: number };
-  /** The a.c. load at the output, ohms. */
-  load: number;
-  /** The part of the source resistor that carries signal, ohms; 0 where bypassed. */
-  degeneration: number;
+  q: { id: number; vds: number; vgs: number };
+  network: Pick<Network, "slope" | "degeneration" | "output" | "feedthrough">;
 };
 
 /**
@@ -21,23 +18,25 @@ export type SignalPath = {
  * @param input instantaneous gate voltage above its quiescent value, V
  * @returns amperes
  */
-export function instantaneousCurrent(path: SignalPath, input: number): number {
-  const { device, q, load, degeneration } = path;
-  const slope = load + degeneration;
+export function instantaneousCurrent({ device, q, network }: SignalPath, input: number): number {
+  const { slope, degeneration, feedthrough } = network;
   const drive = q.vgs + input;
   // Along the a.c. line the device sees a rail of VDS + ID rS: the d.c. problem again, with other numbers.
-  const rail = q.vds + q.id * slope;
+  const rail = q.vds + q.id * slope + feedthrough * input;
   const overdrive = drive + q.id * degeneration - device.vt;
-  if (overdrive <= 0) return 0;
+  if (overdrive <= 0 || rail <= 0) return 0;
   const x = saturationOverdrive(device, rail, overdrive, degeneration, slope);
   const saturated = saturationCurrent(device, rail, x, slope);
   if (rail - saturated * slope >= x) return saturated;
-  const balance = (current: number) => {
-    const change = current - q.id;
-    return drainCurrent(device, drive - change * degeneration, q.vds - change * slope) - current;
-  };
+  const balance = (current: number) =>
+    drainCurrent(device, drive - (current - q.id) * degeneration, rail - current * slope) - current;
   // Where the a.c. line reaches VDS = 0 the device carries nothing, so the root lies below.
   return findRoot(balance, 0, rail / slope);
+}
+
+/** How far the output has moved from rest at one instant, V: up or down as the network inverts. */
+function outputAt({ q, network }: SignalPath, input: number, current: number): number {
+  return network.output * (current - q.id) - network.feedthrough * input;
 }
 
 /** Samples a period; even harmonics of a static curve need only the rising half, mirrored. */
@@ -63,7 +62,7 @@ export function distortionAt(path: SignalPath, inputPeak: number): Distortion {
     const weight = step === 0 || step === HALF_PERIOD_STEPS ? 0.5 : 1;
     const sine = Math.sin(theta);
     const current = instantaneousCurrent(path, inputPeak * sine);
-    const output = (current - path.q.id) * path.load;
+    const output = outputAt(path, inputPeak * sine, current);
     fundamental += weight * output * sine;
     second += weight * output * Math.cos(2 * theta);
     third += weight * output * Math.sin(3 * theta);
@@ -78,11 +77,11 @@ export function distortionAt(path: SignalPath, inputPeak: number): Distortion {
   };
 }
 
-function isClipped(path: SignalPath, input: number, current: number): boolean {
+function isClipped({ device, q, network }: SignalPath, input: number, current: number): boolean {
   if (current === 0) return true;
-  const change = current - path.q.id;
-  const overdrive = path.q.vgs + input - change * path.degeneration - path.device.vt;
-  return path.q.vds - change * (path.load + path.degeneration) < overdrive;
+  const change = current - q.id;
+  const overdrive = q.vgs + input - change * network.degeneration - device.vt;
+  return q.vds + network.feedthrough * input - change * network.slope < overdrive;
 }
 
 /**

@@ -2,14 +2,15 @@ import { z } from "zod";
 import { biasSchema, distortionSchema, swingSchema } from "./bias";
 import { briefSchema } from "./brief";
 import { cautionSchema } from "./caution";
+import { resistorsSchema } from "./circuit";
 import { partSchema } from "./part";
 
-export const OBJECTIVES = ["centred"] as const;
+export const OBJECTIVES = ["centred", "assured", "cost"] as const;
 export const DISTINCTS = ["part", "none"] as const;
 
 export const fitsRequestSchema = z.strictObject({
   brief: briefSchema,
-  objective: z.enum(OBJECTIVES, { error: 'Rank by "centred"' }).default("centred"),
+  objective: z.enum(OBJECTIVES, { error: 'Rank by "centred", "assured" or "cost"' }).default("centred"),
   distinct: z.enum(DISTINCTS, { error: 'Distinct is "part" or "none"' }).default("part"),
   limit: z.int().min(1, "At least one").max(20_000, "At most 20,000").default(100),
 });
@@ -22,6 +23,7 @@ export const PASSED_OVER_REASONS = [
   "unit-price",
   "rail-rating",
   "swing",
+  "assured-swing",
   "supply-current",
   "source-drop",
   "power-rating",
@@ -51,10 +53,8 @@ export const fitPartSchema = partSchema
 
 export const fitSchema = z.object({
   part: fitPartSchema,
-  r1: z.number(),
-  r2: z.number(),
-  rd: z.number(),
-  rs: z.number(),
+  /** Ohms; 0 where the circuit has none there. */
+  ...z.object(resistorsSchema.shape).shape,
   bias: biasSchema,
   /** Supply current of the whole stage, drain and divider, in amperes. */
   supplyCurrent: z.number(),
@@ -62,9 +62,9 @@ export const fitSchema = z.object({
   highCorner: z.number().nullable(),
   /** At the brief's output peak; null when the brief states none. */
   distortion: distortionSchema.nullable(),
-  /** The least swing of any build inside the spread; null until the box has been searched. */
-  assured: swingSchema.nullable(),
-  /** Integer cents for the five parts at the build quantity; null until priced. */
+  /** The least room of any build inside the spread; 0 where one leaves saturation or doesn't conduct. */
+  assured: swingSchema,
+  /** Integer cents for the transistor and the resistors of the whole build; null where one has no price. */
   cost: z.int().nullable(),
   cautions: z.array(cautionSchema),
 });

@@ -1,12 +1,10 @@
 import { z } from "zod";
 import { briefSchema } from "./brief";
+import { resistorsSchema } from "./circuit";
 import { partSchema } from "./part";
-import { ohms, sourceOhms } from "./quantity";
 
 export const stageName = z.string().trim().min(1, "Give the stage a name").max(120, "At most 120 characters");
 export const stageNote = z.string().max(5000, "At most 5,000 characters");
-
-export const resistorsSchema = z.strictObject({ r1: ohms, r2: ohms, rd: ohms, rs: sourceOhms });
 
 /** Keeps a fit: the server freezes the part's figures and the brief as they are now. */
 export const keepStageSchema = z.strictObject({
@@ -49,7 +47,6 @@ export const stageSchema = z.object({
 
 export const stageListSchema = z.object({ items: z.array(stageSchema) });
 
-export type Resistors = z.infer<typeof resistorsSchema>;
 export type KeepStage = z.infer<typeof keepStageSchema>;
 export type UpdateStage = z.infer<typeof updateStageSchema>;
 export type Stage = z.infer<typeof stageSchema>;

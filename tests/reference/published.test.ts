@@ -1,9 +1,10 @@
 import { describe, expect, it } from "vitest";
-import { solveFourResistor } from "#shared/bias/circuits/four-resistor/solve";
 import { drainCurrent, thresholdAt } from "#shared/bias/device";
 import { millerCapacitances, millerPoles } from "#shared/bias/high-corner";
+import { solveStage } from "#shared/bias/solve-stage";
 import { transitionPoint } from "#shared/bias/swing";
 import type { Bias, Device, StageValues } from "#shared/schemas/bias";
+import { buildStageValues } from "../support/build-stage";
 import gainDistortion from "./checks/gain-distortion.json";
 import operatingPoints from "./checks/operating-points.json";
 import published from "./checks/published.json";
@@ -20,7 +21,7 @@ const relative = (actual: number, expected: number) => Math.abs(actual / expecte
 
 describe("operating points solved beforehand by a circuit simulator (ngspice 39, level 1)", () => {
   it.each(operatingPoints.cases as unknown as Case[])("$id", ({ device, stage, result }) => {
-    const bias = solveFourResistor(device, stage);
+    const bias = solveStage(device, buildStageValues(stage));
     expect(bias.region).toBe(result.region);
     expect(relative(bias.id, result.id as number)).toBeLessThan(1e-3);
     expect(relative(bias.vds, result.vds as number)).toBeLessThan(1e-3);
@@ -32,7 +33,7 @@ describe("gain and second harmonic solved beforehand by a circuit simulator", ()
   it.each(gainDistortion.cases as unknown as (Case & { input: { peak: number } })[])(
     "$id",
     ({ device, stage, input, result }) => {
-      const bias = solveFourResistor(device, stage, input.peak);
+      const bias = solveStage(device, buildStageValues(stage), input.peak);
       // The simulator's gain is the fundamental over the input at that peak, so compression is in it.
       expect(relative(Math.abs(bias.gain), result.gainMagnitude as number)).toBeLessThan(5e-3);
       expect(relative(bias.distortion?.secondHarmonic ?? 0, result.hd2 as number)).toBeLessThan(1e-4);
@@ -52,7 +53,7 @@ describe("worked examples with published inputs", () => {
   );
 
   it.each(fourResistor)("$id: $source", ({ device, stage, result }) => {
-    const bias = solveFourResistor(device, stage);
+    const bias = solveStage(device, buildStageValues(stage));
     expect(bias.region).toBe(result.region);
     for (const key of ["vg", "id", "vgs", "vds", "gm"] as const) {
       const expected = result[key];
@@ -62,7 +63,7 @@ describe("worked examples with published inputs", () => {
 
   it("divider-10v-centred has 3.000 V toward cutoff and 2.630 V toward the ohmic region", () => {
     const { device, stage } = named("divider-10v-centred");
-    const { swing } = solveFourResistor(device, stage);
+    const { swing } = solveStage(device, buildStageValues(stage));
     expect(swing?.towardCutoff).toBeCloseTo(3.0, 6);
     expect(swing?.towardOhmic).toBeCloseTo(2.63, 3);
   });
@@ -104,10 +105,12 @@ describe("worked examples with published inputs", () => {
     const stage = {
       gm: 7.5e-3,
       gds: 0,
-      load: 1.2e3,
-      degeneration: 0,
+      drain: 1.2e3,
+      source: 0,
+      gate: 1e6,
+      feedback: null,
+      output: "drain" as const,
       sourceImpedance: 1e3,
-      inputResistance: 1e6,
     };
     // The wiring's 1 pF stands where a drain-source capacitance would.
     const poles = millerPoles(stage, { cgs: 3.5e-12, cgd: 2.5e-12, cds: 1e-12 }, gain, 1.2e3);
@@ -123,7 +126,7 @@ describe("worked examples with published inputs", () => {
       const vgs = 1 + overdrive;
       // A rail high enough, and a load small enough, that even the largest amplitude stays in saturation.
       const stage = stageWithGateAt(vgs, 40);
-      const { distortion } = solveFourResistor(device, stage, amplitude) as Bias;
+      const { distortion } = solveStage(device, stage, amplitude) as Bias;
       expect(distortion?.secondHarmonic).toBeCloseTo(hd2, 6);
       // A square has no third harmonic.
       expect(distortion?.thirdHarmonic).toBeLessThan(1e-9);
@@ -137,7 +140,9 @@ describe("worked examples with published inputs", () => {
     };
     result.vt.forEach((vt, n) => {
       const moved = { ...device, vt: thresholdAt(vt, -2e-3, 25) };
-      expect(relative(solveFourResistor(moved, stage).id, result.idWithSourceResistor[n])).toBeLessThan(1e-3);
+      expect(
+        relative(solveStage(moved, buildStageValues(stage)).id, result.idWithSourceResistor[n]),
+      ).toBeLessThan(1e-3);
       expect(drainCurrent(moved, 2, 4)).toBeCloseTo(result.idAtFixedVgs[n], 9);
     });
   });
@@ -145,5 +150,5 @@ describe("worked examples with published inputs", () => {
 
 function stageWithGateAt(vg: number, vdd: number): StageValues {
   const r2 = 100e3;
-  return { vdd, r1: (r2 * (vdd - vg)) / vg, r2, rd: 1e3, rs: 0, rl: null, sourceBypassed: true };
+  return buildStageValues({ vdd, r1: (r2 * (vdd - vg)) / vg, r2, rd: 1e3 });
 }

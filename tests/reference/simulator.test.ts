@@ -1,6 +1,7 @@
 import { describe, expect, it } from "vitest";
-import { solveFourResistor } from "#shared/bias/circuits/four-resistor/solve";
+import { solveStage } from "#shared/bias/solve-stage";
 import type { Device, StageValues } from "#shared/schemas/bias";
+import { buildStageValues } from "../support/build-stage";
 import { type Random, seededRandom, significant } from "../support/random";
 import { simulateOperatingPoints } from "./ngspice";
 
@@ -23,15 +24,13 @@ function drawStage(random: Random): { device: Device; stage: StageValues } {
       k: significant(random.logBetween(5e-5, 0.3)),
       lambda: random.chance(0.4) ? 0 : significant(random.between(0.002, 0.05)),
     },
-    stage: {
+    stage: buildStageValues({
       vdd,
       r1: significant(Math.max(0.1, total - r2)),
       r2,
       rd,
       rs: random.chance(0.25) ? 0 : significant(rd * random.between(0.05, 1)),
-      rl: null,
-      sourceBypassed: true,
-    },
+    }),
   };
 }
 
@@ -43,7 +42,7 @@ describe(`operating points agree with ngspice (seed ${SEED})`, () => {
   it.each(cases.map((drawn, n) => ({ ...drawn, n })))(
     "on random stage $n, $device.polarity-channel",
     ({ device, stage, n }) => {
-      const bias = solveFourResistor(device, stage);
+      const bias = solveStage(device, stage);
       expect(Math.abs(bias.id / simulated[n].id - 1)).toBeLessThan(1e-3);
       expect(Math.abs(bias.vds / simulated[n].vds - 1)).toBeLessThan(1e-3);
     },

@@ -1,22 +1,27 @@
 import { z } from "zod";
 import type { Brief } from "#shared/schemas/brief";
-import { ohms, sourceOhms } from "#shared/schemas/quantity";
+import { RESISTOR_KEYS, type Resistors, resistorIssues, resistorsSchema } from "#shared/schemas/circuit";
 import { readBriefParameter, writeBriefParameter } from "./brief-link";
+
+/** A resistor as an address writes it; those that the circuit doesn't have are left out. */
+const resistor = z.coerce.number().default(0).pipe(resistorsSchema.shape.r1.unwrap());
 
 /** A fit that is looked at before it is kept: everything its sheet needs, in the address. */
 const fitSchema = z.object({
   part: z.coerce.number().int().positive(),
-  r1: z.coerce.number().pipe(ohms),
-  r2: z.coerce.number().pipe(ohms),
-  rd: z.coerce.number().pipe(ohms),
-  rs: z.coerce.number().pipe(sourceOhms),
+  r1: resistor,
+  r2: resistor,
+  rg: resistor,
+  rd: resistor,
+  rs: resistor,
+  rs2: resistor,
   brief: z.coerce.number().int().positive().optional(),
   fit: z.coerce.number().int().positive().optional(),
 });
 
 export type LinkedFit = {
   partId: number;
-  resistors: { r1: number; r2: number; rd: number; rs: number };
+  resistors: Resistors;
   brief: Brief;
   /** The saved brief it was ranked for, when there is one. */
   briefId: number | null;
@@ -26,7 +31,7 @@ export type LinkedFit = {
 
 export function stageLink({ partId, resistors, brief, briefId, place }: LinkedFit): string {
   const search = new URLSearchParams({ part: String(partId) });
-  for (const [name, value] of Object.entries(resistors)) search.set(name, String(value));
+  for (const name of RESISTOR_KEYS) if (resistors[name] > 0) search.set(name, String(resistors[name]));
   if (briefId !== null) search.set("brief", String(briefId));
   if (place !== null) search.set("fit", String(place));
   const written = writeBriefParameter(brief);
@@ -40,5 +45,6 @@ export function readStageLink(search: URLSearchParams): LinkedFit | null {
   const brief = readBriefParameter(search.get("b"));
   if (!parsed.success || !brief) return null;
   const { part, brief: briefId = null, fit = null, ...resistors } = parsed.data;
+  if (resistorIssues(brief.circuit, resistors).length > 0) return null;
   return { partId: part, resistors, brief, briefId, place: fit };
 }

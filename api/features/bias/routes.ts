@@ -1,4 +1,4 @@
-import { solveFourResistor } from "#shared/bias/circuits/four-resistor/solve";
+import { solveStage } from "#shared/bias/solve-stage";
 import { biasSchema, solveRequestSchema } from "#shared/schemas/bias";
 import { route } from "../../http/route";
 
@@ -11,6 +11,6 @@ export const biasRoutes = [
     summary: "Solve the Q-point of one stage and what follows from it",
     body: solveRequestSchema,
     response: biasSchema,
-    handle: (_context, { body }) => solveFourResistor(body.device, body.stage, body.inputPeak),
+    handle: (_context, { body }) => solveStage(body.device, body.stage, body.inputPeak),
   }),
 ];

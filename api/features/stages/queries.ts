@@ -1,8 +1,9 @@
 import { and, desc, eq, isNotNull, isNull } from "drizzle-orm";
 import { alias } from "drizzle-orm/mysql-core";
-import type { Brief } from "#shared/schemas/brief";
+import { type Brief, briefSchema } from "#shared/schemas/brief";
+import { type Resistors, resistorsSchema } from "#shared/schemas/circuit";
 import type { Part } from "#shared/schemas/part";
-import type { Resistors, Stage } from "#shared/schemas/stage";
+import type { Stage } from "#shared/schemas/stage";
 import type { Queryable } from "../../db/client";
 import { users } from "../../db/schema/identity";
 import { stages } from "../../db/schema/stages";
@@ -38,6 +39,9 @@ type Row = Awaited<ReturnType<typeof select>>[number];
 function present({ briefId, briefName, briefVersion, ...row }: Row): Stage {
   return {
     ...row,
+    // Stages kept before a field came to be take its default.
+    brief: briefSchema.parse(row.brief),
+    resistors: resistorsSchema.parse(row.resistors),
     origin: briefId && briefName && briefVersion ? { briefId, briefName, briefVersion } : null,
     createdAt: row.createdAt.toISOString(),
     updatedAt: row.updatedAt.toISOString(),

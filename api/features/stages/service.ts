@@ -1,3 +1,4 @@
+import { resistorIssues } from "#shared/schemas/circuit";
 import type { KeepStage, Stage, UpdateStage } from "#shared/schemas/stage";
 import type { Queryable } from "../../db/client";
 import { changedFields } from "../../http/changes";
@@ -19,7 +20,7 @@ export function getStage({ db, actor }: SignedInContext, id: number): Promise<St
 /** Keeps a fit: the part's figures are frozen as they are now, whatever becomes of the catalog. */
 export async function keepStage(context: SignedInContext, input: KeepStage): Promise<Stage> {
   const { db, actor, clock } = context;
-  requireSourceResistor(input);
+  requireResistors(input);
   const part = await getPart(context, input.partId);
   const brief = input.briefId === null ? null : await getBrief(context, input.briefId);
   const stage = {
@@ -39,7 +40,7 @@ export async function keepStage(context: SignedInContext, input: KeepStage): Pro
 /**
  * Renames a stage, notes something on it or changes its values.
  *
- * @throws a conflict that names what differs, when the version edited is no longer the latest; a 422 problem for an RS
+ * @throws a conflict that names what differs, when the version edited is no longer the latest; a 422 problem for resistors
  *   that the stage's brief rules out
  */
 export function saveStage(
@@ -60,15 +61,22 @@ export function saveStage(
       );
     }
     const saved = await readStage(transaction, actor.team.id, id);
-    requireSourceResistor(saved);
+    requireResistors(saved);
     return saved;
   });
 }
 
-function requireSourceResistor({ brief, resistors }: Pick<Stage, "brief" | "resistors">): void {
-  if ((brief.sourceResistor === "none") === (resistors.rs === 0)) return;
-  const message = "RS is 0 exactly where the brief asks for no source resistor";
-  throw invalid([{ path: "resistors.rs", message }]);
+/** Refuses resistors that are not those of the brief's circuit. */
+function requireResistors({ brief, resistors }: Pick<Stage, "brief" | "resistors">): void {
+  const issues = resistorIssues(brief.circuit, resistors).map(({ key, message }) => ({
+    path: `resistors.${key}`,
+    message,
+  }));
+  if ((brief.sourceResistor === "none") !== (resistors.rs === 0)) {
+    const message = "RS is 0 exactly where the brief asks for no source resistor";
+    issues.push({ path: "resistors.rs", message });
+  }
+  if (issues.length > 0) throw invalid(issues);
 }
 
 export async function deleteStage({ db, actor, clock }: SignedInContext, id: number): Promise<undefined> {

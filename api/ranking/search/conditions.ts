@@ -60,8 +60,8 @@ export function failedCondition(
   const gain = (gm * line.load) / (1 + gds * line.slope + gm * line.degeneration);
   if (gain < problem.gainMin || gain > problem.gainMax) return "gain";
   if (problem.distortionMax < Number.POSITIVE_INFINITY && problem.distortionPeak > 0) {
-    const { load, degeneration } = line;
-    const path = { device, q: { id, vds, vgs: device.vt + x }, load, degeneration };
+    const network = { output: line.load, slope: line.slope, degeneration: line.degeneration, feedthrough: 0 };
+    const path = { device, q: { id, vds, vgs: device.vt + x }, network };
     const { secondHarmonic } = distortionAt(path, problem.distortionPeak / gain);
     if (!(secondHarmonic <= problem.distortionMax)) return "distortion";
   }
@@ -81,10 +81,12 @@ export function reachesCorner(
   if (highCornerMin === 0) return true;
   const stage: SmallSignalStage = {
     ...conductancesAt(device, point),
-    load: line.load,
-    degeneration: line.degeneration,
+    drain: line.load,
+    source: line.degeneration,
+    gate: (r1 * r2) / (r1 + r2),
+    feedback: null,
+    output: "drain",
     sourceImpedance,
-    inputResistance: (r1 * r2) / (r1 + r2),
   };
   // Cheap and necessary; the corner itself is only worked out for what passes.
   if (2 * transferSquared(stage, device, highCornerMin) < transferSquared(stage, device, 0)) return false;

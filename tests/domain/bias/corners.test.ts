@@ -5,10 +5,12 @@ import { lowCorner, resistanceAtSource, smallestCapacitors } from "#shared/bias/
 const STAGE = {
   gm: 5e-3,
   gds: 2e-5,
-  load: 4.7e3,
-  degeneration: 0,
+  drain: 4.7e3,
+  source: 0,
+  gate: 470e3,
+  feedback: null,
+  output: "drain" as const,
   sourceImpedance: 10e3,
-  inputResistance: 470e3,
 };
 const CAPACITANCES = { cgs: 30e-12, cgd: 5e-12, cds: 8e-12 };
 
@@ -21,7 +23,7 @@ describe("the high corner", () => {
 
   it("lies at the Miller pole where the source impedance dominates", () => {
     const gain = Math.sqrt(transferSquared({ ...STAGE, sourceImpedance: 0 }, CAPACITANCES, 0));
-    const poles = millerPoles(STAGE, CAPACITANCES, gain, 1 / (1 / STAGE.load + STAGE.gds));
+    const poles = millerPoles(STAGE, CAPACITANCES, gain, 1 / (1 / STAGE.drain + STAGE.gds));
     const corner = highCorner(STAGE, CAPACITANCES) ?? 0;
     expect(poles.input ?? 0).toBeLessThan((poles.output ?? 0) / 10);
     // Miller's approximation leaves the output pole out, so the true corner is a little lower.
@@ -30,8 +32,8 @@ describe("the high corner", () => {
   });
 
   it("is where the gain has fallen by 3 dB, with and without source degeneration", () => {
-    for (const degeneration of [0, 330]) {
-      const stage = { ...STAGE, degeneration };
+    for (const source of [0, 330]) {
+      const stage = { ...STAGE, source };
       const corner = highCorner(stage, CAPACITANCES) ?? 0;
       const ratio = transferSquared(stage, CAPACITANCES, corner) / transferSquared(stage, CAPACITANCES, 0);
       expect(10 * Math.log10(ratio)).toBeCloseTo(-3.0103, 4);

@@ -1,9 +1,10 @@
 import fc from "fast-check";
 import { describe, expect, it } from "vitest";
-import { solveFourResistor } from "#shared/bias/circuits/four-resistor/solve";
 import { findRoot } from "#shared/bias/find-root";
+import { solveStage } from "#shared/bias/solve-stage";
 import { distortionAt } from "#shared/bias/wave";
 import type { Device, StageValues } from "#shared/schemas/bias";
+import { buildStageValues } from "../../support/build-stage";
 
 const decade = (low: number, high: number) =>
   fc.double({ min: Math.log(low), max: Math.log(high), noNaN: true }).map(Math.exp);
@@ -15,15 +16,17 @@ const devices: fc.Arbitrary<Device> = fc.record({
   lambda: fc.oneof(fc.constant(0), fc.double({ min: 0.001, max: 0.05, noNaN: true })),
 });
 
-const stages: fc.Arbitrary<StageValues> = fc.record({
-  vdd: fc.double({ min: 6, max: 48, noNaN: true }),
-  r1: decade(1e4, 1e7),
-  r2: decade(1e4, 1e7),
-  rd: decade(200, 1e5),
-  rs: fc.oneof(fc.constant(0), decade(20, 1e4)),
-  rl: fc.oneof(fc.constant(null), decade(1e3, 1e6)),
-  sourceBypassed: fc.boolean(),
-});
+const stages: fc.Arbitrary<StageValues> = fc
+  .record({
+    vdd: fc.double({ min: 6, max: 48, noNaN: true }),
+    r1: decade(1e4, 1e7),
+    r2: decade(1e4, 1e7),
+    rd: decade(200, 1e5),
+    rs: fc.oneof(fc.constant(0), decade(20, 1e4)),
+    rl: fc.oneof(fc.constant(null), decade(1e3, 1e6)),
+    sourceBypassed: fc.boolean(),
+  })
+  .map(buildStageValues);
 
 /** Moves the divider until the stage sits at dead centre; null where no gate voltage does. */
 function centred(device: Device, stage: StageValues): StageValues | null {
@@ -34,7 +37,7 @@ function centred(device: Device, stage: StageValues): StageValues | null {
     r2: (total * vg) / stage.vdd,
   });
   const lean = (vg: number) => {
-    const bias = solveFourResistor(device, withGate(vg));
+    const bias = solveStage(device, withGate(vg));
     if (bias.region === "cutoff") return -1;
     return bias.swing ? bias.swing.towardCutoff - bias.swing.towardOhmic : 1;
   };
@@ -42,7 +45,7 @@ function centred(device: Device, stage: StageValues): StageValues | null {
   const high = stage.vdd * 0.999;
   if (low >= high || lean(low) > 0 || lean(high) < 0) return null;
   const found = withGate(findRoot(lean, low, high));
-  const bias = solveFourResistor(device, found);
+  const bias = solveStage(device, found);
   return bias.centringError !== null && bias.centringError < 1e-6 ? found : null;
 }
 
@@ -54,7 +57,7 @@ describe("a centred Q-point (common practice)", () => {
         const found = centred(device, stage);
         if (!found) return;
         tried++;
-        const { id, vds, transition } = solveFourResistor(device, found);
+        const { id, vds, transition } = solveStage(device, found);
         const load = found.rl === null ? found.rd : (found.rd * found.rl) / (found.rd + found.rl);
         const slope = load + (found.sourceBypassed ? 0 : found.rs);
         const end = { vds: vds + id * slope, id: 0 };
@@ -72,8 +75,8 @@ describe("a centred Q-point (common practice)", () => {
       fc.property(devices, stages, fc.double({ min: 0.8, max: 1.25, noNaN: true }), (device, stage, move) => {
         const found = centred(device, stage);
         if (!found) return;
-        const best = solveFourResistor(device, found).swing?.symmetric ?? 0;
-        const other = solveFourResistor(device, { ...found, r1: found.r1 * move }).swing;
+        const best = solveStage(device, found).swing?.symmetric ?? 0;
+        const other = solveStage(device, { ...found, r1: found.r1 * move }).swing;
         if (!other) return;
         expect(other.symmetric).toBe(Math.min(other.towardCutoff, other.towardOhmic));
         expect(other.symmetric).toBeLessThanOrEqual(best * (1 + 1e-6));
@@ -85,8 +88,8 @@ describe("a centred Q-point (common practice)", () => {
   it("moves toward the ohmic region as the gate voltage rises, and never back", () => {
     fc.assert(
       fc.property(devices, stages, (device, stage) => {
-        const before = solveFourResistor(device, stage).swing;
-        const after = solveFourResistor(device, { ...stage, r2: stage.r2 * 1.02 }).swing;
+        const before = solveStage(device, stage).swing;
+        const after = solveStage(device, { ...stage, r2: stage.r2 * 1.02 }).swing;
         if (!before || !after) return;
         expect(after.towardCutoff).toBeGreaterThan(before.towardCutoff);
         expect(after.towardOhmic).toBeLessThan(before.towardOhmic);
@@ -110,8 +113,7 @@ describe("an input small beside twice the overdrive (common practice)", () => {
             device: { vt: 1, k, lambda: 0 },
             // A load so small that the drain hardly moves: nothing clips.
             q: { id, vds: 20, vgs: 1 + overdrive },
-            load: 1 / id,
-            degeneration: 0,
+            network: { output: 1 / id, slope: 1 / id, degeneration: 0, feedthrough: 0 },
           };
           const { secondHarmonic, clipped } = distortionAt(path, input);
           expect(clipped).toBe(false);
@@ -126,7 +128,7 @@ describe("regions", () => {
   it("never calls a stage saturated whose VDS is below its overdrive, nor conducting below threshold", () => {
     fc.assert(
       fc.property(devices, stages, (device, stage) => {
-        const bias = solveFourResistor(device, stage);
+        const bias = solveStage(device, stage);
         if (bias.region === "saturation") expect(bias.vds).toBeGreaterThanOrEqual(bias.overdrive);
         if (bias.region === "ohmic") expect(bias.vds).toBeLessThan(bias.overdrive);
         if (bias.region === "cutoff") expect(bias.id).toBe(0);

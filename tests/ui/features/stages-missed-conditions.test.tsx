@@ -1,12 +1,13 @@
 import { describe, expect, it } from "vitest";
 import { describeStage } from "#shared/bias/stage-sheet";
 import { type Brief, type BriefInput, briefSchema } from "#shared/schemas/brief";
+import type { Resistors } from "#shared/schemas/circuit";
 import type { Part } from "#shared/schemas/part";
-import type { Resistors } from "#shared/schemas/stage";
 import { missedConditions } from "../../../web/features/stages/missed-conditions";
 import { buildPart } from "../../support/build-part";
+import { buildResistors } from "../../support/build-stage";
 
-const RESISTORS: Resistors = { r1: 1.8e6, r2: 750e3, rd: 2700, rs: 1200 };
+const RESISTORS = buildResistors({ r1: 1.8e6, r2: 750e3, rd: 2700, rs: 1200 });
 
 function briefWith(conditions: Partial<BriefInput> = {}): Brief {
   return briefSchema.parse({ rail: { volts: 12 }, load: { ohms: 10e3 }, ...conditions });

@@ -1,11 +1,12 @@
 import fc from "fast-check";
 import { describe, expect, test } from "vitest";
-import { loadLineFigure } from "#shared/bias/circuits/four-resistor/figure";
+import { loadLineFigure } from "#shared/bias/figure";
 import { briefSchema } from "#shared/schemas/brief";
 import { lengthInside, overlaps, placeLabels } from "../../../web/figures/label-placement";
 import { labelCharacteristics, labelLoadLine } from "../../../web/figures/load-line-labels";
 import { layOutLoadLine } from "../../../web/figures/load-line-layout";
 import { buildPart } from "../../support/build-part";
+import { buildResistors } from "../../support/build-stage";
 
 const box = { left: 0, top: 0, right: 10, bottom: 10 };
 
@@ -79,7 +80,8 @@ test("no label lies on another or outside the drawing, for any stage at any widt
         });
         const brief = briefSchema.parse({ polarity, rail: { volts }, load: { ohms: load }, sourceResistor });
         const rs = sourceResistor === "none" ? 0 : rd * rsShare;
-        const data = loadLineFigure(part, brief, { r1: 1e6 * (1 - gate), r2: 1e6 * gate, rd, rs }, 25, drive);
+        const resistors = buildResistors({ r1: 1e6 * (1 - gate), r2: 1e6 * gate, rd, rs });
+        const data = loadLineFigure(part, brief, resistors, 25, drive);
         const layout = layOutLoadLine(data, width);
         const labels = labelLoadLine(data, layout);
         for (const [index, { box: one, text }] of labels.entries()) {

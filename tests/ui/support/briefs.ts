@@ -2,6 +2,7 @@ import { screen } from "@testing-library/react";
 import { HttpResponse, http } from "msw";
 import { briefSchema, type SavedBrief } from "#shared/schemas/brief";
 import type { Fit, FitsRequest, FitsResponse } from "#shared/schemas/fits";
+import { buildResistors } from "../../support/build-stage";
 import type { renderAt } from "./render";
 import { API, server } from "./server";
 
@@ -35,10 +36,7 @@ export function buildFit(id: number, partNumber: string, symmetric: number): Fit
       stock: 1200,
       unitPrice: 11,
     },
-    r1: 1.8e6,
-    r2: 750e3,
-    rd: 2700,
-    rs: 1200,
+    ...buildResistors({ r1: 1.8e6, r2: 750e3, rd: 2700, rs: 1200 }),
     bias: {
       region: "saturation",
       vg: 3.53,
@@ -59,7 +57,7 @@ export function buildFit(id: number, partNumber: string, symmetric: number): Fit
     supplyCurrent: 1.9e-3,
     highCorner: 2e6,
     distortion: null,
-    assured: null,
+    assured: { towardCutoff: 0.5 * symmetric, towardOhmic: 0.6 * symmetric, symmetric: 0.5 * symmetric },
     cost: null,
     cautions: [],
   };

@@ -5,6 +5,7 @@ import type { Stage, UpdateStage } from "#shared/schemas/stage";
 import { StagePage } from "../../../web/features/stages/stage-page";
 import { StagesPage } from "../../../web/features/stages/stages-page";
 import { buildPart } from "../../support/build-part";
+import { buildResistors } from "../../support/build-stage";
 import type { renderAt } from "./render";
 import { API, server } from "./server";
 
@@ -15,7 +16,7 @@ export const BRIEF: Brief = briefSchema.parse({
   ambient: { min: 0, max: 50 },
 });
 export const PART = buildPart();
-export const RESISTORS = { r1: 1.8e6, r2: 750e3, rd: 2700, rs: 1200 };
+export const RESISTORS = buildResistors({ r1: 1.8e6, r2: 750e3, rd: 2700, rs: 1200 });
 
 export function buildStage(overrides: Partial<Stage> = {}): Stage {
   const someone = { id: "u1", name: "S. Omeone" };

@@ -1,4 +1,5 @@
 import type { Brief } from "#shared/schemas/brief";
+import { pickResistors, resistorsOf } from "#shared/schemas/circuit";
 import type { Fit } from "#shared/schemas/fits";
 import { formatCents, formatCount } from "#shared/values/engineering";
 import { BalanceBar } from "../../figures/balance-bar";
@@ -8,13 +9,12 @@ import { Value } from "../../ui/value";
 
 /** The address of a fit's sheet. */
 export function linkTo(fit: Fit, brief: Brief, briefId: number | null, place: number | null): string {
-  const { part, r1, r2, rd, rs } = fit;
-  return stageLink({ partId: part.id, resistors: { r1, r2, rd, rs }, brief, briefId, place });
+  return stageLink({ partId: fit.part.id, resistors: pickResistors(fit), brief, briefId, place });
 }
 
 /** The columns of a resistor set, used for the best set of each part and for its others. */
 export function setColumns(brief: Brief, scale: number, isNarrow: boolean): DataTableColumn<Fit>[] {
-  const resistors = (["r1", "r2", "rd", "rs"] as const)
+  const resistors = resistorsOf(brief.circuit)
     .filter((name) => name !== "rs" || brief.sourceResistor !== "none")
     .map(
       (name): DataTableColumn<Fit> => ({

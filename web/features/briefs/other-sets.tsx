@@ -2,6 +2,7 @@ import { useQuery } from "@tanstack/react-query";
 import { useMemo } from "react";
 import { useNavigate } from "react-router-dom";
 import type { Brief } from "#shared/schemas/brief";
+import { pickResistors } from "#shared/schemas/circuit";
 import { problemOf } from "../../lib/api";
 import { DataTable } from "../../ui/data-table";
 import { ProblemMessage } from "../../ui/problem-message";
@@ -25,7 +26,7 @@ export function OtherSets({ brief, briefId, partId, scale }: OtherSetsProps) {
       label={`Resistor sets of ${data[0]?.part.partNumber ?? "this part"}`}
       columns={columns}
       rows={data}
-      rowId={({ r1, r2, rd, rs }) => [r1, r2, rd, rs].join(" ")}
+      rowId={(fit) => Object.values(pickResistors(fit)).join(" ")}
       onOpen={(fit) => navigate(linkTo(fit, brief, briefId, null))}
     />
   );

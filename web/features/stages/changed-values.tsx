@@ -1,4 +1,4 @@
-import type { Resistors } from "#shared/schemas/stage";
+import type { Resistors } from "#shared/schemas/circuit";
 import { formatResistance } from "#shared/values/engineering";
 import { usePreferences } from "../../lib/preferences";
 import { Button } from "../../ui/button";

@@ -1,8 +1,8 @@
 import { useQuery } from "@tanstack/react-query";
 import { useMemo, useState } from "react";
 import { Link, useNavigate, useSearchParams } from "react-router-dom";
+import type { Resistors } from "#shared/schemas/circuit";
 import type { Part } from "#shared/schemas/part";
-import type { Resistors } from "#shared/schemas/stage";
 import { problemOf } from "../../lib/api";
 import { writeBriefParameter } from "../../lib/brief-link";
 import { briefsQuery } from "../../lib/lists";

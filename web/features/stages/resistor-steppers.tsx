@@ -1,11 +1,10 @@
+import { circuitOf } from "#shared/bias/circuits/registry";
 import type { Brief } from "#shared/schemas/brief";
-import type { Resistors } from "#shared/schemas/stage";
+import { type ResistorKey, type Resistors, resistorsOf } from "#shared/schemas/circuit";
 import { stepInSeries } from "#shared/values/e-series";
 import { formatResistance } from "#shared/values/engineering";
 import { usePreferences } from "../../lib/preferences";
 import { Stepper } from "../../ui/stepper";
-
-type ResistorName = keyof Resistors;
 
 type ResistorSteppersProps = {
   brief: Brief;
@@ -13,21 +12,21 @@ type ResistorSteppersProps = {
   onChange: (resistors: Resistors) => void;
 };
 
-const RANGES = { r1: "divider", r2: "divider", rd: "drain", rs: "source" } as const;
-
 /** Each resistor with its neighbours in its own series, one step away. */
 export function ResistorSteppers({ brief, resistors, onChange }: ResistorSteppersProps) {
   const { resistances } = usePreferences();
   const show = (ohms: number) => formatResistance(ohms, resistances);
-  const names: ResistorName[] = resistors.rs > 0 ? ["r1", "r2", "rd", "rs"] : ["r1", "r2", "rd"];
-  const series = [...new Set(names.map((name) => brief.resistors[RANGES[name]].series))];
+  const { ranges } = circuitOf(brief.circuit);
+  const names = resistorsOf(brief.circuit).filter((name) => resistors[name] > 0);
+  const seriesOf = (name: ResistorKey) => brief.resistors[ranges[name] ?? "divider"].series;
+  const series = [...new Set(names.map(seriesOf))];
   return (
     <section aria-labelledby="resistors-title">
       <h2 id="resistors-title" className="pb-1 font-semibold text-sm">
         Resistors, one step in {series.join(" and ")}
       </h2>
       {names.map((name) => {
-        const { series: own } = brief.resistors[RANGES[name]];
+        const own = seriesOf(name);
         const value = resistors[name];
         const lower = stepInSeries(own, value, -1);
         const higher = stepInSeries(own, value, 1);

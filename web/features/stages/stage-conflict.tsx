@@ -1,6 +1,7 @@
 import { useQueryClient } from "@tanstack/react-query";
+import type { Resistors } from "#shared/schemas/circuit";
 import type { Problem } from "#shared/schemas/problem";
-import { type Resistors, type Stage, stageSchema } from "#shared/schemas/stage";
+import { type Stage, stageSchema } from "#shared/schemas/stage";
 import { formatResistance } from "#shared/values/engineering";
 import { usePreferences } from "../../lib/preferences";
 import { Button } from "../../ui/button";

@@ -1,10 +1,10 @@
 import { type ReactNode, useMemo, useState } from "react";
-import { loadLineFigure } from "#shared/bias/circuits/four-resistor/figure";
+import { loadLineFigure } from "#shared/bias/figure";
 import { describeStage, distortionPeak, type StageSheet } from "#shared/bias/stage-sheet";
 import { cautionsFor } from "#shared/cautions";
 import type { Brief } from "#shared/schemas/brief";
+import type { Resistors } from "#shared/schemas/circuit";
 import type { Part } from "#shared/schemas/part";
-import type { Resistors } from "#shared/schemas/stage";
 import { formatPercent, formatQuantity } from "#shared/values/engineering";
 import { BalanceBar } from "../../figures/balance-bar";
 import { LoadLineFigure } from "../../figures/load-line-figure";

@@ -1,8 +1,6 @@
 import { useMemo } from "react";
 import { useSearchParams } from "react-router-dom";
-import { type Resistors, resistorsSchema } from "#shared/schemas/stage";
-
-const NAMES = ["r1", "r2", "rd", "rs"] as const;
+import { RESISTOR_KEYS, type Resistors, resistorsSchema } from "#shared/schemas/circuit";
 
 /**
  * The values that somebody tries on a kept stage. Only what was stepped stands in the address: one may go and look
@@ -18,7 +16,7 @@ export function useTriedValues(kept: Resistors): {
   const write = (change: (params: URLSearchParams, name: keyof Resistors) => void) =>
     setSearch(
       (params) => {
-        for (const name of NAMES) change(params, name);
+        for (const name of RESISTOR_KEYS) change(params, name);
         return params;
       },
       { replace: true, preventScrollReset: true },
@@ -36,10 +34,10 @@ export function useTriedValues(kept: Resistors): {
 
 function readTried(search: URLSearchParams, kept: Resistors): Resistors {
   const tried = { ...kept };
-  for (const name of NAMES) {
+  for (const name of RESISTOR_KEYS) {
     const text = search.get(name);
     const parsed = resistorsSchema.shape[name].safeParse(Number(text));
-    // A wire stays a wire: whether there is a source resistor is the brief's to say.
+    // What the circuit lacks stays away, and a wire stays a wire: both are the brief's to say.
     if (text !== null && parsed.success && (parsed.data === 0) === (kept[name] === 0)) {
       tried[name] = parsed.data;
     }

@@ -1,14 +1,12 @@
-import { convexHull } from "#shared/bias/convex-hull";
-import { conductionAt, drainCurrent, regionOf, type SquareLaw, thresholdAt } from "#shared/bias/device";
-import type { Characteristic, FigurePoint, LoadLineData, WavePoint } from "#shared/bias/figure-data";
-import { figureStage, type StageFigures } from "#shared/bias/stage-sheet";
-import { instantaneousCurrent } from "#shared/bias/wave";
-import type { StageValues } from "#shared/schemas/bias";
 import type { Brief } from "#shared/schemas/brief";
+import type { Resistors } from "#shared/schemas/circuit";
 import type { Part } from "#shared/schemas/part";
-import type { Resistors } from "#shared/schemas/stage";
-import { solveQPoint } from "./q-point";
-import { acResistances, signalPath } from "./solve";
+import { convexHull } from "./convex-hull";
+import { drainCurrent, regionOf, type SquareLaw } from "./device";
+import type { Characteristic, FigurePoint, LoadLineData, WavePoint } from "./figure-data";
+import { boxOf, cornerQPoints } from "./spread";
+import { figureStage, type StageFigures } from "./stage-sheet";
+import { instantaneousCurrent } from "./wave";
 
 /** Curves above and below the one through the Q-point. */
 const CURVES_EACH_WAY = 3;
@@ -32,13 +30,13 @@ export function loadLineFigure(
   outputPeak: number,
 ): LoadLineData {
   const figures = figureStage(part, brief, resistors, celsius);
-  const { device, values, bias } = figures;
-  const { slope, load } = acResistances(values);
+  const { device, values, bias, network } = figures;
+  const { slope } = network;
   const q = { vds: bias.vds, id: bias.id, vgs: bias.vgs };
   const swings = bias.swing !== null;
   const dcLine: LoadLineData["dcLine"] = [
-    { vds: 0, id: values.vdd / (values.rd + values.rs) },
-    { vds: values.vdd, id: 0 },
+    { vds: 0, id: network.supply / network.total },
+    { vds: network.supply, id: 0 },
   ];
   const acLine: LoadLineData["acLine"] = swings
     ? [
@@ -46,15 +44,15 @@ export function loadLineFigure(
         { vds: q.vds + q.id * slope, id: 0 },
       ]
     : null;
-  const spread = outline(buildCorners(part, brief, resistors));
+  const spread = outline(cornerQPoints(boxOf(part, brief, values)));
   // Half as high again, so that the edge leaves the drawing at its frame and not in it.
   const top = 1.5 * Math.max(dcLine[0].id, acLine?.[0].id ?? 0);
   return {
     polarity: part.polarity,
-    vdd: values.vdd,
+    vdd: network.supply,
     dcLine,
     acLine,
-    characteristics: characteristicsOf(device, q.vgs, bias.transition?.vds ?? null, values.vdd),
+    characteristics: characteristicsOf(device, q.vgs, bias.transition?.vds ?? null, network.supply),
     edge: edgeOfSaturation(device, top),
     q,
     transition: bias.transition,
@@ -62,43 +60,8 @@ export function loadLineFigure(
     room: bias.swing && { towardOhmic: bias.swing.towardOhmic, towardCutoff: bias.swing.towardCutoff },
     spread,
     corners: spread,
-    ...drawWave(figures, outputPeak, load),
+    ...drawWave(figures, outputPeak),
   };
-}
-
-/**
- * Q-points of the builds at the corners of the spread: threshold and K at their ends, each resistor and the rail at
- * theirs, at both ends of the ambient range.
- */
-function buildCorners(part: Part, brief: Brief, resistors: Resistors): FigurePoint[] {
-  const resistorTolerance = brief.resistors.tolerance;
-  const points: FigurePoint[] = [];
-  for (const celsius of [brief.ambient.min, brief.ambient.max]) {
-    for (const vt of [part.vtMin, part.vtMax]) {
-      for (const k of [part.kMin, part.kMax]) {
-        const device: SquareLaw = {
-          vt: thresholdAt(vt, part.tcVt, celsius),
-          k: conductionAt(k, celsius),
-          lambda: part.lambda,
-        };
-        for (let bits = 0; bits < 32; bits++) {
-          const off = (bit: number, tolerance: number) => 1 + (bits & (1 << bit) ? tolerance : -tolerance);
-          const stage: StageValues = {
-            vdd: brief.rail.volts * off(0, brief.rail.tolerance),
-            r1: resistors.r1 * off(1, resistorTolerance),
-            r2: resistors.r2 * off(2, resistorTolerance),
-            rd: resistors.rd * off(3, resistorTolerance),
-            rs: resistors.rs * off(4, resistorTolerance),
-            rl: brief.load.ohms,
-            sourceBypassed: true,
-          };
-          const { vds, id } = solveQPoint(device, stage);
-          points.push({ vds, id });
-        }
-      }
-    }
-  }
-  return points;
 }
 
 /** The outline around the corners, with both axes brought to one scale first so that rounding treats them alike. */
@@ -146,20 +109,19 @@ function edgeOfSaturation(device: SquareLaw, top: number): FigurePoint[] {
   }).filter(({ id }) => id <= top);
 }
 
-/** The drain voltage over time for a sine at the gate, clipped where the stage clips. */
+/** The drain-source voltage over time for a sine at the gate, clipped where the stage clips. */
 function drawWave(
-  { device, values, bias }: StageFigures,
+  { device, network, bias }: StageFigures,
   outputPeak: number,
-  load: number,
 ): Pick<LoadLineData, "wave" | "clipped"> {
   if (!bias.swing || outputPeak <= 0)
     return { wave: [], clipped: { towardOhmic: false, towardCutoff: false } };
-  const path = signalPath(device, values, bias);
-  const { degeneration } = acResistances(values);
+  const path = { device, q: bias, network };
+  const { slope, degeneration, feedthrough } = network;
   const inputPeak = outputPeak / Math.abs(bias.gain);
   const drainSource = (input: number) => {
     const current = instantaneousCurrent(path, input);
-    return { current, vds: bias.vds - (current - bias.id) * (load + degeneration) };
+    return { current, vds: bias.vds + feedthrough * input - (current - bias.id) * slope };
   };
   const wave: WavePoint[] = Array.from({ length: WAVE_POINTS + 1 }, (_, index) => {
     const t = (WAVE_PERIODS * index) / WAVE_POINTS;
