@@ -1,11 +1,17 @@
+import { circuitOf } from "#shared/bias/circuits/registry";
 import type { Brief } from "#shared/schemas/brief";
 import { formatPercent, formatQuantity } from "#shared/values/engineering";
+import { circuitInWords, sourceInWords } from "./circuit-words";
 
 const exact = { exact: true } as const;
 
-/** A brief in one line for a list: 12 V ± 5 %, 10 kΩ, 1.5 V peak. */
-export function briefInWords({ rail, load, swing }: Brief): string {
-  const words = [`${formatQuantity(rail.volts, "V", exact)} ± ${formatQuantity(rail.tolerance, "%", exact)}`];
+/** A brief in one line for a list: source follower, 12 V ± 5 %, 10 kΩ, 1.5 V peak. */
+export function briefInWords({ circuit, rail, load, swing }: Brief): string {
+  const volts = formatQuantity(rail.volts, "V", exact);
+  const below =
+    circuit === "negative-rail" ? ` and −${formatQuantity(rail.negative ?? rail.volts, "V", exact)}` : "";
+  const words = [`${volts}${below} ± ${formatQuantity(rail.tolerance, "%", exact)}`];
+  if (circuit !== "four-resistor") words.unshift(circuitInWords(circuit));
   words.push(load.ohms === null ? "no load" : `into ${formatQuantity(load.ohms, "Ω", exact)}`);
   if (swing.peak > 0) words.push(`${formatQuantity(swing.peak, "V", exact)} peak`);
   return words.join(", ");
@@ -22,15 +28,17 @@ export function conditionsInWords(brief: Brief): string[] {
   if (supplyCurrent.max !== undefined)
     words.push(`at most ${formatQuantity(supplyCurrent.max, "A", exact)} from the rail`);
   if (sourceDrop.min !== undefined)
-    words.push(`at least ${formatQuantity(sourceDrop.min, "V", exact)} across RS`);
+    words.push(`at least ${formatQuantity(sourceDrop.min, "V", exact)} across ${sourceInWords(brief)}`);
   if (highCorner.min !== undefined) words.push(`flat to ${formatQuantity(highCorner.min, "Hz", exact)}`);
   if (distortion.max !== undefined) {
     const peak =
       distortion.atPeak === undefined ? "" : ` at ${formatQuantity(distortion.atPeak, "V", exact)} peak`;
     words.push(`second harmonic at most ${formatPercent(distortion.max, 2)}${peak}`);
   }
-  if (brief.sourceResistor === "unbypassed") words.push("RS not bypassed");
-  if (brief.sourceResistor === "none") words.push("no RS");
+  if (circuitOf(brief.circuit).sourceResistors.length > 1) {
+    if (brief.sourceResistor === "unbypassed") words.push("RS not bypassed");
+    if (brief.sourceResistor === "none") words.push("no RS");
+  }
   if (source.ohms > 0) words.push(`from ${formatQuantity(source.ohms, "Ω", exact)}`);
   words.push([polarityInWords(brief), mountingInWords(brief)].filter(Boolean).join(", "));
   if (parts.packages) words.push(parts.packages.join(" or "));

@@ -1,6 +1,8 @@
 import { screen } from "@testing-library/react";
 import { HttpResponse, http } from "msw";
-import { briefSchema, type SavedBrief } from "#shared/schemas/brief";
+import type { Yield } from "#shared/schemas/bias";
+import { type Brief, briefSchema, type SavedBrief } from "#shared/schemas/brief";
+import type { Resistors } from "#shared/schemas/circuit";
 import type { Fit, FitsRequest, FitsResponse } from "#shared/schemas/fits";
 import { buildResistors } from "../../support/build-stage";
 import type { renderAt } from "./render";
@@ -76,9 +78,31 @@ export function buildAnswer(overrides: Partial<FitsResponse> = {}): FitsResponse
   };
 }
 
-/** Answers each ranking as lines: progress, then the result; keeps what was asked. */
+export type YieldsRequest = {
+  brief: Brief;
+  fits: { partId: number; resistors: Resistors }[];
+  builds: number;
+  seed: number;
+};
+
+/** Answers each request for yields with the same one for every fit; keeps what was asked. */
+export function playYields(one: Partial<Yield> = {}): YieldsRequest[] {
+  const asked: YieldsRequest[] = [];
+  server.use(
+    http.post(`${API}/fits/yield`, async ({ request }) => {
+      const body = (await request.json()) as YieldsRequest;
+      asked.push(body);
+      const answer: Yield = { fraction: 0.973, low: 0.9697, high: 0.976, builds: body.builds, ...one };
+      return HttpResponse.json({ yields: body.fits.map(() => answer) });
+    }),
+  );
+  return asked;
+}
+
+/** Answers each ranking as lines: progress, then the result; keeps what was asked. Yields are played too. */
 export function playRanking(...answers: FitsResponse[]): FitsRequest[] {
   const asked: FitsRequest[] = [];
+  playYields();
   server.use(
     http.post(`${API}/fits`, async ({ request }) => {
       asked.push((await request.json()) as FitsRequest);

@@ -1,4 +1,5 @@
 import { useQuery } from "@tanstack/react-query";
+import { useMemo } from "react";
 import { useParams, useSearchParams } from "react-router-dom";
 import type { SavedBrief } from "#shared/schemas/brief";
 import { problemOf } from "../../lib/api";
@@ -23,7 +24,8 @@ export function BriefPage() {
 function SavedBriefWorkbench({ saved }: { saved: SavedBrief }) {
   const [search] = useSearchParams();
   const parameter = search.get("b");
-  const brief = (parameter && readBriefParameter(parameter)) || saved.brief;
+  const linked = useMemo(() => (parameter ? readBriefParameter(parameter) : null), [parameter]);
+  const brief = linked ?? saved.brief;
   return (
     <BriefWorkbench
       brief={brief}

@@ -2,6 +2,8 @@ import { type ReactNode, useId, useState } from "react";
 import { useWatch } from "react-hook-form";
 import { useSearchParams } from "react-router-dom";
 import type { Brief } from "#shared/schemas/brief";
+import { OBJECTIVES, type Objective } from "#shared/schemas/fits";
+import { Schematic } from "../../figures/schematics/schematic";
 import { isSameBrief, writeBriefParameter } from "../../lib/brief-link";
 import { conditionsInWords } from "../../lib/brief-words";
 import { Button } from "../../ui/button";
@@ -26,11 +28,12 @@ type BriefWorkbenchProps = {
 
 /** The brief as a sentence, and under it its ranked fits. */
 export function BriefWorkbench({ brief, ranked, briefId, title }: BriefWorkbenchProps) {
-  const { form, onUnreadable, isUnreadable, complaints } = useBriefForm(brief);
+  const { form, onUnreadable, chooseCircuit, isUnreadable, complaints } = useBriefForm(brief);
   const current = useWatch({ control: form.control }) as Brief;
   const [search, setSearch] = useSearchParams();
   const [open, setOpen] = useState(false);
-  const ranking = useRanking(ranked);
+  const objective = readObjective(search.get("by"));
+  const ranking = useRanking(ranked, objective);
   const errorId = useId();
   const conditionsId = useId();
 
@@ -38,6 +41,8 @@ export function BriefWorkbench({ brief, ranked, briefId, title }: BriefWorkbench
     if (ranked && isSameBrief(next, ranked)) return ranking.rank();
     setSearch((params) => {
       params.set("b", writeBriefParameter(next) || "{}");
+      // Another circuit has other columns.
+      if (next.circuit !== ranked?.circuit) params.delete("sort");
       return params;
     });
   };
@@ -56,30 +61,39 @@ export function BriefWorkbench({ brief, ranked, briefId, title }: BriefWorkbench
     <>
       {title({ brief: current, isValid: complaints.length === 0, validate })}
       <form onSubmit={submit} noValidate className="mt-4">
-        <Sentence form={form} errorId={errorId} onUnreadable={onUnreadable} />
-        <div id={errorId} className="mt-2 flex flex-col gap-1 empty:hidden">
-          {complaints.map(({ path, name, message }) => (
-            <FieldError key={path}>
-              {name}: {message}
-            </FieldError>
-          ))}
-        </div>
-        <div data-no-print="" className="mt-4 flex flex-wrap items-center gap-x-5 gap-y-2 text-quiet">
-          <Button variant="main" type="submit" busy={ranking.isRanking}>
-            Rank the fits
-          </Button>
-          {conditionsInWords(current).map((words) => (
-            <span key={words}>{words}</span>
-          ))}
-          <button
-            type="button"
-            aria-expanded={open}
-            aria-controls={conditionsId}
-            onClick={() => setOpen(!open)}
-            className="underline decoration-edge underline-offset-4 hover:text-ink"
-          >
-            {open ? "fewer conditions" : "more conditions"}
-          </button>
+        <div className="grid gap-x-8 gap-y-4 xl:grid-cols-[minmax(0,1fr)_auto]">
+          <div className="min-w-0">
+            <Sentence form={form} errorId={errorId} onUnreadable={onUnreadable} onCircuit={chooseCircuit} />
+            <div id={errorId} className="mt-2 flex flex-col gap-1 empty:hidden">
+              {complaints.map(({ path, name, message }) => (
+                <FieldError key={path}>
+                  {name}: {message}
+                </FieldError>
+              ))}
+            </div>
+            <div data-no-print="" className="mt-4 flex flex-wrap items-center gap-x-5 gap-y-2 text-quiet">
+              <Button variant="main" type="submit" busy={ranking.isRanking}>
+                Rank the fits
+              </Button>
+              {conditionsInWords(current).map((words) => (
+                <span key={words}>{words}</span>
+              ))}
+              <button
+                type="button"
+                aria-expanded={open}
+                aria-controls={conditionsId}
+                onClick={() => setOpen(!open)}
+                className="underline decoration-edge underline-offset-4 hover:text-ink"
+              >
+                {open ? "fewer conditions" : "more conditions"}
+              </button>
+            </div>
+          </div>
+          <Schematic
+            circuit={current.circuit}
+            sourceResistor={current.sourceResistor}
+            channel={current.polarity === "p" ? "p" : "n"}
+          />
         </div>
         <div id={conditionsId} hidden={!open} className="mt-6">
           {open && <MoreConditions form={form} onUnreadable={onUnreadable} />}
@@ -91,6 +105,19 @@ export function BriefWorkbench({ brief, ranked, briefId, title }: BriefWorkbench
             brief={ranked}
             briefId={briefId}
             ranking={ranking}
+            objective={objective}
+            onObjectiveChange={(next) =>
+              setSearch(
+                (params) => {
+                  if (next === DEFAULT_OBJECTIVE) params.delete("by");
+                  else params.set("by", next);
+                  // The list comes in the order that was asked for.
+                  params.delete("sort");
+                  return params;
+                },
+                { preventScrollReset: true },
+              )
+            }
             sort={readSort(search.get("sort"))}
             onSortChange={(sort) =>
               setSearch(
@@ -113,6 +140,12 @@ export function BriefWorkbench({ brief, ranked, briefId, title }: BriefWorkbench
       )}
     </>
   );
+}
+
+const DEFAULT_OBJECTIVE: Objective = "centred";
+
+function readObjective(text: string | null): Objective {
+  return OBJECTIVES.find((objective) => objective === text) ?? DEFAULT_OBJECTIVE;
 }
 
 /** "gain" sorts upward, "-gain" downward. */

@@ -6,6 +6,18 @@ import { BalanceBar } from "../../figures/balance-bar";
 import { stageLink } from "../../lib/stage-link";
 import type { DataTableColumn } from "../../ui/data-table-model";
 import { Value } from "../../ui/value";
+import { Explained } from "./explained";
+import { YieldCell } from "./yield-cell";
+
+/** What the columns are for. */
+export type ColumnsContext = {
+  brief: Brief;
+  /** The volts that half a balance bar stands for. */
+  scale: number;
+  isNarrow: boolean;
+  /** The ranking goes on, so the rows may still change. */
+  isProvisional: boolean;
+};
 
 /** The address of a fit's sheet. */
 export function linkTo(fit: Fit, brief: Brief, briefId: number | null, place: number | null): string {
@@ -13,7 +25,8 @@ export function linkTo(fit: Fit, brief: Brief, briefId: number | null, place: nu
 }
 
 /** The columns of a resistor set, used for the best set of each part and for its others. */
-export function setColumns(brief: Brief, scale: number, isNarrow: boolean): DataTableColumn<Fit>[] {
+export function setColumns(context: ColumnsContext): DataTableColumn<Fit>[] {
+  const { brief, scale, isNarrow, isProvisional } = context;
   const resistors = resistorsOf(brief.circuit)
     .filter((name) => name !== "rs" || brief.sourceResistor !== "none")
     .map(
@@ -22,7 +35,8 @@ export function setColumns(brief: Brief, scale: number, isNarrow: boolean): Data
         header: name.toUpperCase(),
         numeric: true,
         sortValue: (fit) => fit[name],
-        cell: (fit) => <Value number={fit[name]} unit="Ω" />,
+        // Zero stands for a resistor that the circuit can do without.
+        cell: (fit) => <Value number={fit[name] || null} unit="Ω" />,
       }),
     );
   const balance: DataTableColumn<Fit> = {
@@ -35,12 +49,12 @@ export function setColumns(brief: Brief, scale: number, isNarrow: boolean): Data
     ),
     name: "Room each way",
     className: "min-w-56",
-    cell: ({ bias }) =>
+    cell: ({ bias, assured }) =>
       bias.swing && (
         <BalanceBar
           towardOhmic={bias.swing.towardOhmic}
           towardCutoff={bias.swing.towardCutoff}
-          assured={null}
+          assured={assured}
           scale={scale}
         />
       ),
@@ -59,6 +73,21 @@ export function setColumns(brief: Brief, scale: number, isNarrow: boolean): Data
       numeric: true,
       sortValue: (fit) => fit.bias.swing?.symmetric,
       cell: (fit) => <Value number={fit.bias.swing?.symmetric} unit="V" />,
+    },
+    {
+      id: "assured",
+      header: "assured swing",
+      numeric: true,
+      className: "min-w-20",
+      sortValue: (fit) => fit.assured.symmetric,
+      cell: (fit) => <AssuredSwing volts={fit.assured.symmetric} />,
+    },
+    {
+      id: "yield",
+      header: "yield",
+      numeric: true,
+      hideable: true,
+      cell: (fit) => <YieldCell brief={brief} fit={fit} isProvisional={isProvisional} />,
     },
     {
       id: "gain",
@@ -106,6 +135,7 @@ export function setColumns(brief: Brief, scale: number, isNarrow: boolean): Data
       name: "Input resistance",
       numeric: true,
       hideable: true,
+      hidden: true,
       sortValue: (fit) => fit.bias.inputResistance,
       cell: (fit) => <Value number={fit.bias.inputResistance} unit="Ω" digits={3} />,
     },
@@ -129,11 +159,40 @@ export function setColumns(brief: Brief, scale: number, isNarrow: boolean): Data
       cell: (fit) => <Value number={fit.highCorner} unit="Hz" />,
     },
   ];
-  return isNarrow ? [balance, ...resistors, ...figures] : [...resistors, balance, ...figures];
+  const cost: DataTableColumn<Fit> = {
+    id: "cost",
+    header: `cost of ${formatCount(brief.buildQuantity)}`,
+    name: "Cost of the whole build, and of one stage",
+    numeric: true,
+    hideable: true,
+    sortValue: (fit) => fit.cost,
+    cell: (fit) => <Cost cents={fit.cost} builds={brief.buildQuantity} />,
+  };
+  return isNarrow ? [balance, ...resistors, ...figures, cost] : [...resistors, balance, ...figures, cost];
+}
+
+/** Zero is a figure, not a failure: the stage works, but not every build of it stays in saturation. */
+function AssuredSwing({ volts }: { volts: number }) {
+  if (volts > 0) return <Value number={volts} unit="V" />;
+  return <Explained explanation="some builds leave saturation">0 V</Explained>;
+}
+
+function Cost({ cents, builds }: { cents: number | null; builds: number }) {
+  if (cents === null) return <Explained explanation="a price is missing">—</Explained>;
+  return (
+    <>
+      <span className="block">{formatCents(cents)}</span>
+      <span className="block text-quiet text-xs">
+        {formatCents(Math.round((cents / builds) * 10) / 10)}
+        <span className="font-sans"> each</span>
+      </span>
+    </>
+  );
 }
 
 /** The columns of the ranked parts. */
-export function fitColumns(brief: Brief, scale: number, isNarrow: boolean): DataTableColumn<Fit>[] {
+export function fitColumns(context: ColumnsContext): DataTableColumn<Fit>[] {
+  const { brief } = context;
   return [
     {
       id: "part",
@@ -148,13 +207,14 @@ export function fitColumns(brief: Brief, scale: number, isNarrow: boolean): Data
         </span>
       ),
     },
-    ...setColumns(brief, scale, isNarrow),
+    ...setColumns(context),
     {
       id: "price",
-      header: `each at ${formatCount(brief.buildQuantity)}`,
+      header: `transistor at ${formatCount(brief.buildQuantity)}`,
       name: "Price of the transistor",
       numeric: true,
       hideable: true,
+      hidden: true,
       sortValue: (fit) => fit.part.unitPrice,
       cell: (fit) => <span className="value">{formatCents(fit.part.unitPrice)}</span>,
     },

@@ -1,8 +1,10 @@
 import type { ReactNode } from "react";
 import { Controller, type FieldPath, useWatch } from "react-hook-form";
+import { circuitOf } from "#shared/bias/circuits/registry";
 import type { Brief } from "#shared/schemas/brief";
 import { SERIES_NAMES, type SeriesName } from "#shared/values/e-series";
 import type { Unit } from "#shared/values/units";
+import { type RangeName, rangesOf, resistorsInWords, sourceInWords } from "../../lib/circuit-words";
 import { Checkbox } from "../../ui/checkbox";
 import { Field } from "../../ui/field";
 import { QuantityInput } from "../../ui/quantity-input";
@@ -14,6 +16,11 @@ type ConditionsProps = { form: BriefForm; onUnreadable: (path: string, message: 
 
 /** The rest of the brief as a form, in groups. */
 export function MoreConditions(props: ConditionsProps) {
+  const [circuit, sourceResistor] = useWatch({
+    control: props.form.control,
+    name: ["circuit", "sourceResistor"],
+  });
+  const treatments = circuitOf(circuit).sourceResistors;
   return (
     <div className="grid gap-x-12 gap-y-8 border-rule border-t pt-6 sm:grid-cols-2 lg:grid-cols-3">
       <Group title="What the stage must do">
@@ -34,8 +41,20 @@ export function MoreConditions(props: ConditionsProps) {
         <Quantity {...props} name="source.ohms" label="Source impedance" unit="Ω" required />
         <Quantity {...props} name="lowCorner.hertz" label="Low corner" unit="Hz" required />
         <Quantity {...props} name="highCorner.min" label="High corner, at least" unit="Hz" />
-        <SourceResistor {...props} />
-        <Quantity {...props} name="sourceDrop.min" label="Drop across RS, at least" unit="V" />
+        {treatments.length > 1 && (
+          <Choice
+            {...props}
+            name="sourceResistor"
+            label="Source resistor"
+            options={treatments.map((value) => ({ value, label: TREATMENTS[value] }))}
+          />
+        )}
+        <Quantity
+          {...props}
+          name="sourceDrop.min"
+          label={`Drop across ${sourceInWords({ circuit, sourceResistor })}, at least`}
+          unit="V"
+        />
       </Group>
       <Group title="Device">
         <Choice
@@ -63,9 +82,9 @@ export function MoreConditions(props: ConditionsProps) {
         <Tick {...props} name="parts.stockedOnly" label="Only parts in stock" />
       </Group>
       <Group title="Resistors">
-        <Range {...props} range="divider" label="R1 and R2" />
-        <Range {...props} range="drain" label="RD" />
-        <Range {...props} range="source" label="RS" />
+        {rangesOf({ circuit, sourceResistor }).map(({ range, resistors }) => (
+          <Range key={range} {...props} range={range} label={resistorsInWords(resistors)} />
+        ))}
         <Tick {...props} name="resistors.stockedOnly" label="Only values in stock" />
       </Group>
       <Group title="Derating">
@@ -176,20 +195,11 @@ function Choice<T extends string>({ form, name, label, options, placeholder }: C
   );
 }
 
-function SourceResistor(props: ConditionsProps) {
-  return (
-    <Choice
-      {...props}
-      name="sourceResistor"
-      label="Source resistor"
-      options={[
-        { value: "bypassed", label: "Bypassed" },
-        { value: "unbypassed", label: "Not bypassed" },
-        { value: "none", label: "None" },
-      ]}
-    />
-  );
-}
+const TREATMENTS: Record<Brief["sourceResistor"], string> = {
+  bypassed: "Bypassed",
+  unbypassed: "Not bypassed",
+  none: "None",
+};
 
 type TickProps = ConditionsProps & { name: "parts.stockedOnly" | "resistors.stockedOnly"; label: string };
 
@@ -216,10 +226,8 @@ function List({ form, name, label }: ListProps) {
 const SERIES_OPTIONS = SERIES_NAMES.map((name) => ({ value: name as SeriesName, label: name as string }));
 
 /** Series, smallest and largest value of one kind of resistor, on one line. */
-function Range(props: ConditionsProps & { range: "divider" | "drain" | "source"; label: string }) {
+function Range(props: ConditionsProps & { range: RangeName; label: string }) {
   const { range, label, ...rest } = props;
-  const none = useWatch({ control: props.form.control, name: "sourceResistor" }) === "none";
-  if (range === "source" && none) return null;
   return (
     <fieldset aria-label={label} className="grid grid-cols-[5.5rem_1fr_1fr] gap-2">
       <Choice {...rest} name={`resistors.${range}.series`} label={label} options={SERIES_OPTIONS} />

@@ -1,4 +1,4 @@
-import { useState } from "react";
+import { useMemo, useState } from "react";
 import { useNavigate, useSearchParams } from "react-router-dom";
 import type { Brief } from "#shared/schemas/brief";
 import { problemOf } from "../../lib/api";
@@ -18,7 +18,7 @@ export function NewBriefPage() {
   useDocumentTitle("New brief");
   const [search] = useSearchParams();
   const parameter = search.get("b");
-  const linked = readBriefParameter(parameter);
+  const linked = useMemo(() => readBriefParameter(parameter), [parameter]);
   const mayWrite = useMay("design:write");
   return (
     <>

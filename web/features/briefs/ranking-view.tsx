@@ -1,6 +1,6 @@
 import { useState } from "react";
 import type { Brief } from "#shared/schemas/brief";
-import type { FitsResponse, Relaxation } from "#shared/schemas/fits";
+import type { FitsResponse, Objective, Relaxation } from "#shared/schemas/fits";
 import { formatCount } from "#shared/values/engineering";
 import { problemOf } from "../../lib/api";
 import { Button } from "../../ui/button";
@@ -10,12 +10,15 @@ import { EmptyState } from "../../ui/empty-state";
 import { ProblemMessage } from "../../ui/problem-message";
 import { Progress } from "../../ui/progress";
 import { FitsTable } from "./fits-table";
+import { ObjectiveChoice } from "./objective-choice";
 import type { RankingProgress, RankingState } from "./use-ranking";
 
 type RankingViewProps = {
   brief: Brief;
   briefId: number | null;
   ranking: RankingState;
+  objective: Objective;
+  onObjectiveChange: (objective: Objective) => void;
   sort: DataTableSort | null;
   onSortChange: (sort: DataTableSort | null) => void;
   /** The form says something else than what was ranked. */
@@ -24,58 +27,59 @@ type RankingViewProps = {
 };
 
 /** What came of ranking a brief: how far it is, the fits, or what stands in the way. */
-export function RankingView({
-  brief,
-  briefId,
-  ranking,
-  sort,
-  onSortChange,
-  isStale,
-  onRelax,
-}: RankingViewProps) {
-  const { result, error, isRanking, progress, cancelled, rank, cancel } = ranking;
-  if (isRanking && !result) {
-    return (
-      <Progress
-        fraction={progress && progress.partsDone / progress.partsTotal}
-        label={progressWords(progress)}
-        action={
-          <Button size="small" onClick={cancel}>
-            Cancel
-          </Button>
-        }
-      />
-    );
-  }
-  if (error) return <ProblemMessage problem={problemOf(error)} onRetry={rank} retrying={isRanking} />;
-  if (cancelled && !result) {
-    return (
-      <EmptyState title="Ranking was cancelled." action={<Button onClick={rank}>Rank again</Button>}>
-        Nothing was kept of it.
-      </EmptyState>
-    );
-  }
-  if (!result) return null;
+export function RankingView(props: RankingViewProps) {
+  const { brief, briefId, ranking, objective, sort, onSortChange, isStale, onRelax } = props;
+  const { result, provisional, error, isRanking, progress, cancelled, rank, cancel } = ranking;
+  const shown = result?.fits ?? provisional ?? [];
   return (
     <section aria-label="Ranking">
-      <div className="flex flex-wrap items-baseline justify-between gap-x-8 gap-y-1 pb-3">
-        <p>
-          <Summary result={result} />
-        </p>
+      <div className="flex flex-wrap items-baseline justify-between gap-x-8 gap-y-2 pb-3">
+        {result && (
+          <p>
+            <Summary result={result} />
+          </p>
+        )}
+        <ObjectiveChoice brief={brief} objective={objective} onChange={props.onObjectiveChange} />
         {isStale && (
           <p className="text-caution-ink text-sm">The brief has changed since: rank the fits again.</p>
         )}
       </div>
-      {result.fits.length === 0 ? (
+      {isRanking && !result && (
+        <div className="pb-4">
+          <Progress
+            fraction={progress && progress.partsDone / progress.partsTotal}
+            label={progressWords(progress)}
+            action={
+              <Button size="small" onClick={cancel}>
+                Cancel
+              </Button>
+            }
+          />
+          {shown.length > 0 && (
+            <p className="pt-2 text-quiet text-sm">Provisional, still ranking: these rows may change.</p>
+          )}
+        </div>
+      )}
+      {error ? (
+        <ProblemMessage problem={problemOf(error)} onRetry={rank} retrying={isRanking} />
+      ) : cancelled && !result ? (
+        <EmptyState title="Ranking was cancelled." action={<Button onClick={rank}>Rank again</Button>}>
+          Nothing was kept of it.
+        </EmptyState>
+      ) : result?.fits.length === 0 ? (
         <NothingFits result={result} onRelax={onRelax} />
       ) : (
-        <FitsTable
-          fits={result.fits}
-          brief={brief}
-          briefId={briefId}
-          sort={sort}
-          onSortChange={onSortChange}
-        />
+        shown.length > 0 && (
+          <FitsTable
+            fits={shown}
+            isProvisional={!result}
+            brief={brief}
+            briefId={briefId}
+            objective={objective}
+            sort={sort}
+            onSortChange={onSortChange}
+          />
+        )
       )}
     </section>
   );

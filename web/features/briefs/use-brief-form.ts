@@ -2,13 +2,18 @@ import { zodResolver } from "@hookform/resolvers/zod";
 import { useState } from "react";
 import { type FieldErrors, type UseFormReturn, useForm } from "react-hook-form";
 import { type Brief, briefSchema } from "#shared/schemas/brief";
+import type { CircuitName } from "#shared/schemas/circuit";
+import { adaptBrief, isOffered } from "./adapt-brief";
 
 export type BriefForm = UseFormReturn<Brief, unknown, Brief>;
 
 /** What the fields are called where an error is told apart from its field. */
 const NAMES: Record<string, string> = {
   "rail.volts": "Rail",
+  "rail.negative": "Negative rail",
   "rail.tolerance": "Rail tolerance",
+  circuit: "Circuit",
+  sourceResistor: "Source resistor",
   "load.ohms": "Load",
   "swing.peak": "Swing",
   "ambient.min": "Lowest temperature",
@@ -52,10 +57,19 @@ export function useBriefForm(brief: Brief) {
   const [unreadable, setUnreadable] = useState<Record<string, string>>({});
   const onUnreadable = (path: string, message: string | null) =>
     setUnreadable(({ [path]: _old, ...rest }) => (message === null ? rest : { ...rest, [path]: message }));
+  const chooseCircuit = (circuit: CircuitName) => {
+    const adapted = adaptBrief(form.getValues(), circuit);
+    form.reset(adapted, { keepDefaultValues: true });
+    setUnreadable((old) =>
+      Object.fromEntries(Object.entries(old).filter(([path]) => isOffered(path, adapted))),
+    );
+    void form.trigger();
+  };
   const complaints = { ...errorsByPath(form.formState.errors), ...unreadable };
   return {
     form,
     onUnreadable,
+    chooseCircuit,
     isUnreadable: Object.keys(unreadable).length > 0,
     complaints: Object.entries(complaints).map(([path, message]) => ({
       path,
