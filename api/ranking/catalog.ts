@@ -8,8 +8,13 @@ export type Catalog = {
   size: number;
   id: Float64Array;
   vt: Float64Array;
+  vtMin: Float64Array;
+  vtMax: Float64Array;
   k: Float64Array;
+  kMin: Float64Array;
+  kMax: Float64Array;
   lambda: Float64Array;
+  tcVt: Float64Array;
   vdss: Float64Array;
   pd25: Float64Array;
   rthJa: Float64Array;
@@ -19,7 +24,24 @@ export type Catalog = {
   cds: Float64Array;
 };
 
-const COLUMNS = ["id", "vt", "k", "lambda", "vdss", "pd25", "rthJa", "tjMax", "cgs", "cgd", "cds"] as const;
+const COLUMNS = [
+  "id",
+  "vt",
+  "vtMin",
+  "vtMax",
+  "k",
+  "kMin",
+  "kMax",
+  "lambda",
+  "tcVt",
+  "vdss",
+  "pd25",
+  "rthJa",
+  "tjMax",
+  "cgs",
+  "cgd",
+  "cds",
+] as const;
 
 /** Compares part numbers by code unit, then ids: the order of the ranking's ties. */
 export function compareParts(a: Part, b: Part): number {
@@ -35,8 +57,13 @@ export function buildCatalog(parts: readonly Part[]): Catalog {
   parts.forEach((part, row) => {
     columns.id[row] = part.id;
     columns.vt[row] = part.vtTyp;
+    columns.vtMin[row] = part.vtMin;
+    columns.vtMax[row] = part.vtMax;
     columns.k[row] = part.kTyp;
+    columns.kMin[row] = part.kMin;
+    columns.kMax[row] = part.kMax;
     columns.lambda[row] = part.lambda;
+    columns.tcVt[row] = part.tcVt;
     columns.vdss[row] = part.vdss;
     columns.pd25[row] = part.pd25;
     columns.rthJa[row] = part.rthJa;

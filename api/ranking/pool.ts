@@ -29,20 +29,19 @@ function threads(): Piscina<RankingTask, RankingOutcome> {
  * Runs tasks on the pool, as many at a time as there are threads: further searches that come meanwhile get every
  * other turn, instead of waiting behind all of this one.
  *
+ * @param lanes how many tasks at a time
+ * @param nextTask makes the next task; null when there are no more
  * @param onDone called after each task with its outcome
  */
 export async function runTasks(
-  tasks: readonly RankingTask[],
+  lanes: number,
+  nextTask: () => RankingTask | null,
   onDone: (outcome: RankingOutcome, task: RankingTask) => void,
 ): Promise<void> {
-  let next = 0;
   const lane = async () => {
-    while (next < tasks.length) {
-      const task = tasks[next++];
-      onDone(await threads().run(task), task);
-    }
+    for (let task = nextTask(); task; task = nextTask()) onDone(await threads().run(task), task);
   };
-  await Promise.all(Array.from({ length: THREADS }, lane));
+  await Promise.all(Array.from({ length: lanes }, lane));
 }
 
 /** Ends the threads; the next search starts new ones. */

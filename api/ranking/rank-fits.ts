@@ -9,6 +9,7 @@ import type { ResistorSupply } from "./problem";
 import { type RankingControl, rankParts } from "./rank-parts";
 import { describePassedOver } from "./reasons";
 import { findRelaxation } from "./relax";
+import { resistorsOfCandidate } from "./search/create-search";
 import type { Candidate } from "./search/order";
 
 /** How long a search may take unless told otherwise, ms. */
@@ -33,7 +34,7 @@ export async function rankFits(
   const ranking = await rankParts(request, parts, supply, timed);
   const relax =
     ranking.candidates.length === 0 && ranking.complete
-      ? await findRelaxation(request.brief, parts, supply, timed)
+      ? await findRelaxation(request, parts, supply, timed)
       : null;
   return {
     fits: ranking.candidates.map((candidate) =>
@@ -50,8 +51,8 @@ export async function rankFits(
   };
 }
 
-function presentFit(part: Part, brief: Brief, { r1, r2, rd, rs }: Candidate): Fit {
-  const resistors = { r1, r2, rg: 0, rd, rs, rs2: 0 };
+function presentFit(part: Part, brief: Brief, candidate: Candidate): Fit {
+  const resistors = resistorsOfCandidate(brief.circuit, candidate);
   const figures = figureStage(part, brief, resistors);
   return {
     part: {

@@ -6,8 +6,9 @@ import { buildCatalog, compareParts } from "./catalog";
 import { barredBy } from "./filters";
 import { runTasks, THREADS } from "./pool";
 import { combinationsPerPart, compileProblem, type Problem, type ResistorSupply } from "./problem";
-import { type Candidate, compareCandidates } from "./search/order";
-import type { RankingTask } from "./worker";
+import { promiseOrder } from "./promise-order";
+import { BestCandidates, type Candidate } from "./search/order";
+import type { RankingOutcome, RankingTask } from "./worker";
 
 /** What a search may be told while it runs. */
 export type RankingControl = {
@@ -16,6 +17,10 @@ export type RankingControl = {
   /** Milliseconds since the epoch after which no further part is begun. */
   deadline: number;
   onProgress?: (progress: { partsDone: number; partsTotal: number }) => void;
+  /** Told the best so far as the search goes on; they may still change. */
+  onCandidates?: (candidates: Candidate[], parts: Part[]) => void;
+  /** How many threads to use; all there are unless told otherwise. */
+  threads?: number;
 };
 
 /** The ranking before it is dressed for the answer. */
@@ -30,8 +35,8 @@ export type Ranking = {
 };
 
 /** Tasks a thread: enough for progress and for cancelling soon, few enough that the passing costs nothing. */
-const TASKS_PER_THREAD = 12;
-const MOST_PARTS_A_TASK = 64;
+const TASKS_PER_THREAD = 8;
+const MOST_PARTS_A_TASK = 128;
 
 /**
  * Ranks every part × resistor combination of a brief, exactly, on the worker threads.
@@ -39,7 +44,7 @@ const MOST_PARTS_A_TASK = 64;
  * @throws the signal's reason when called off
  */
 export async function rankParts(
-  request: Pick<FitsRequest, "distinct" | "limit"> & { brief: Brief },
+  request: Pick<FitsRequest, "distinct" | "limit" | "objective"> & { brief: Brief },
   parts: readonly Part[],
   supply: ResistorSupply,
   control: RankingControl,
@@ -53,31 +58,35 @@ export async function rankParts(
     else eligible.push(part);
   }
   eligible.sort(compareParts);
-  const problem = compileProblem(request.brief, supply);
+  const problem = compileProblem(request.brief, request.objective, supply);
   const considered = eligible.length * combinationsPerPart(problem);
   if (considered === 0) {
     for (const _ of eligible) count("resistor-values");
     return { parts: eligible, candidates: [], considered, partsThatFit: 0, complete: true, passedOver };
   }
   const search = startSearch(problem, eligible, control);
-  const best = await search.run({ mode: "each", limit: 1, bar: null, rows: eligible.length });
-  for (const { reason } of best.passedOver) count(reason);
-  const bests = best.candidates.sort(compareCandidates);
-  const ranking = { parts: eligible, considered, partsThatFit: bests.length, passedOver };
-  if (request.distinct === "part" || bests.length === 0) {
-    return { ...ranking, candidates: bests.slice(0, request.limit), complete: best.complete };
+  const order = promiseOrder(problem, eligible);
+  const best = await search.run("each", request.limit, null, order);
+  for (const reason of best.passedOver) count(reason);
+  const ranking = { parts: eligible, considered, partsThatFit: best.partsThatFit, passedOver };
+  if (request.distinct === "part" || best.candidates.length === 0) {
+    return { ...ranking, candidates: best.candidates, complete: best.complete };
   }
-  // Each part's best is in the list or nothing of the part is; the worst of the first so many is a bar for the rest.
-  const bar = bests.length >= request.limit ? bests[request.limit - 1] : null;
-  const top = await search.run({ mode: "top", limit: request.limit, bar, rows: eligible.length });
-  const candidates = top.candidates.sort(compareCandidates).slice(0, request.limit);
-  return { ...ranking, candidates, complete: best.complete && top.complete };
+  // A part whose best is not among the first so many has nothing there, and the last of these is a bar for the rest.
+  const bar = best.candidates.length === request.limit ? best.candidates[request.limit - 1] : null;
+  const rows = Int32Array.from(best.candidates, ({ row }) => row);
+  const top = await search.run("top", request.limit, bar, rows);
+  return { ...ranking, candidates: top.candidates, complete: best.complete && top.complete };
 }
 
-type Pass = Pick<RankingTask, "mode" | "limit" | "bar"> & { rows: number };
+type Pass = Pick<RankingOutcome, "candidates" | "partsThatFit"> & {
+  passedOver: PassedOverReason[];
+  complete: boolean;
+};
 
 /** Prepares a search whose passes share one catalog in memory and one way to call them off. */
 function startSearch(problem: Problem, parts: Part[], control: RankingControl) {
+  const threads = control.threads ?? THREADS;
   const shared = {
     searchId: randomUUID(),
     problem,
@@ -85,33 +94,45 @@ function startSearch(problem: Problem, parts: Part[], control: RankingControl) {
     cancelled: new Int32Array(new SharedArrayBuffer(4)),
     deadline: control.deadline,
   };
-  const run = async ({ rows, ...pass }: Pass) => {
+  const run = async (
+    mode: RankingTask["mode"],
+    limit: number,
+    bar: Candidate | null,
+    rows: Int32Array,
+  ): Promise<Pass> => {
     control.signal?.throwIfAborted();
-    const size = Math.min(MOST_PARTS_A_TASK, Math.max(1, Math.ceil(rows / (THREADS * TASKS_PER_THREAD))));
-    const tasks: RankingTask[] = [];
-    for (let from = 0; from < rows; from += size) {
-      tasks.push({ ...shared, ...pass, from, to: Math.min(rows, from + size) });
-    }
-    const candidates: Candidate[] = [];
-    const passedOver: { row: number; reason: PassedOverReason }[] = [];
-    let complete = true;
+    const total = rows.length;
+    const size = Math.min(MOST_PARTS_A_TASK, Math.max(1, Math.ceil(total / (threads * TASKS_PER_THREAD))));
+    const best = new BestCandidates(limit, bar);
+    const pass: Pass = { candidates: [], partsThatFit: 0, passedOver: [], complete: true };
+    let next = 0;
     let partsDone = 0;
-    control.onProgress?.({ partsDone, partsTotal: rows });
+    control.onProgress?.({ partsDone, partsTotal: total });
     const callOff = () => Atomics.store(shared.cancelled, 0, 1);
     control.signal?.addEventListener("abort", callOff, { once: true });
+    // Each task is made when a thread is free, so that it knows the bar that the tasks before it have set.
+    const nextTask = (): RankingTask | null => {
+      if (next >= total) return null;
+      const from = next;
+      next = Math.min(total, from + size);
+      return { ...shared, mode, limit, bar: best.threshold, rows: rows.slice(from, next) };
+    };
     try {
-      await runTasks(tasks, (outcome, task) => {
-        candidates.push(...outcome.candidates);
-        passedOver.push(...outcome.passedOver);
-        if (outcome.searchedTo < task.to) complete = false;
-        partsDone += outcome.searchedTo - task.from;
-        control.onProgress?.({ partsDone, partsTotal: rows });
+      await runTasks(threads, nextTask, (outcome, task) => {
+        for (const candidate of outcome.candidates) best.add(candidate);
+        pass.partsThatFit += outcome.partsThatFit;
+        for (const { reason } of outcome.passedOver) pass.passedOver.push(reason);
+        if (outcome.done < task.rows.length) pass.complete = false;
+        partsDone += outcome.done;
+        control.onProgress?.({ partsDone, partsTotal: total });
+        if (partsDone < total) control.onCandidates?.(best.sorted(), parts);
       });
     } finally {
       control.signal?.removeEventListener("abort", callOff);
     }
     control.signal?.throwIfAborted();
-    return { candidates, passedOver, complete };
+    pass.candidates = best.sorted();
+    return pass;
   };
   return { run };
 }

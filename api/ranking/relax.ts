@@ -1,5 +1,5 @@
 import type { Brief } from "#shared/schemas/brief";
-import type { PassedOverReason, Relaxation } from "#shared/schemas/fits";
+import type { FitsRequest, PassedOverReason, Relaxation } from "#shared/schemas/fits";
 import type { Part } from "#shared/schemas/part";
 import { formatPercent, formatQuantity } from "#shared/values/engineering";
 import type { Unit } from "#shared/values/units";
@@ -180,14 +180,15 @@ const SIGNIFICANT_DIGITS = 3;
  * @returns null when no single condition helps
  */
 export async function findRelaxation(
-  brief: Brief,
+  { brief, objective }: Pick<FitsRequest, "brief" | "objective">,
   parts: readonly Part[],
   supply: ResistorSupply,
   control: RankingControl,
 ): Promise<Relaxation | null> {
   const quiet = { signal: control.signal, deadline: control.deadline };
   const partsThatFit = async (eased: Brief) =>
-    (await rankParts({ brief: eased, distinct: "part", limit: 1 }, parts, supply, quiet)).partsThatFit;
+    (await rankParts({ brief: eased, objective, distinct: "part", limit: 1 }, parts, supply, quiet))
+      .partsThatFit;
   let best: { parts: number; limit?: Limit; filter?: Filter } = { parts: 0 };
   for (const limit of LIMITS) {
     const stated = limit.stated(brief);

@@ -53,11 +53,16 @@ export function stageValues(brief: Brief, resistors: Resistors): StageValues {
   return {
     circuit: brief.circuit,
     vdd: brief.rail.volts,
-    vss: brief.circuit === "negative-rail" ? (brief.rail.negative ?? brief.rail.volts) : 0,
+    vss: negativeRail(brief),
     ...resistors,
     rl: brief.load.ohms,
     sourceBypassed: brief.sourceResistor !== "unbypassed",
   };
+}
+
+/** Magnitude of a brief's negative rail, V: as stated, else that of the positive one; 0 where the circuit has none. */
+export function negativeRail(brief: Brief): number {
+  return brief.circuit === "negative-rail" ? (brief.rail.negative ?? brief.rail.volts) : 0;
 }
 
 /** The output peak at which a brief's distortion is judged, V: as stated, else the brief's swing; 0 for none. */

@@ -96,12 +96,17 @@ export const fitsResponseSchema = z.object({
   elapsedMs: z.number(),
 });
 
-/** One line of the streamed answer (`Accept: application/x-ndjson`): progress lines, then the result. */
+/**
+ * One line of the streamed answer (`Accept: application/x-ndjson`): progress lines, the first rows as they are found
+ * (they may still change), then the result.
+ */
 export const fitsEventSchema = z.union([
   z.object({ progress: z.object({ partsDone: z.int(), partsTotal: z.int() }) }),
+  z.object({ fits: z.array(fitSchema) }),
   z.object({ result: fitsResponseSchema }),
 ]);
 
+export type Objective = (typeof OBJECTIVES)[number];
 export type FitsRequest = z.infer<typeof fitsRequestSchema>;
 export type Fit = z.infer<typeof fitSchema>;
 export type FitsResponse = z.infer<typeof fitsResponseSchema>;

@@ -1,3 +1,14 @@
+import {
+  degeneration,
+  halve,
+  type PlainCircuit,
+  type PlainPoint,
+  type PlainStage,
+  plainAssured,
+  plainPoint,
+  signalVoltages,
+} from "./plain-stage";
+
 /**
  * Every combination, tried in turn: the ranking as its definition reads, written apart from the engine and sharing no
  * code with it. Each root is found by halving, each circuit solved by elimination; slow and plain on purpose.
@@ -7,9 +18,14 @@ export type PlainPart = {
   id: number;
   partNumber: string;
   polarity: "n" | "p";
+  vtMin: number;
   vtTyp: number;
+  vtMax: number;
+  kMin: number;
   kTyp: number;
+  kMax: number;
   lambda: number;
+  tcVt: number;
   ciss: number;
   coss: number;
   crss: number;
@@ -18,15 +34,22 @@ export type PlainPart = {
   tjMax: number;
 };
 
+export type PlainResistor = "r1" | "r2" | "rg" | "rd" | "rs" | "rs2";
+
 /** The brief's conditions, flat; a limit left out does not bind. */
 export type PlainBrief = {
+  circuit: PlainCircuit;
+  objective: "centred" | "assured" | "cost";
   vdd: number;
+  vss: number;
   load: number | null;
   sourceImpedance: number;
-  sourceResistor: "bypassed" | "unbypassed" | "none";
-  divider: number[];
-  drain: number[];
-  source: number[];
+  bypassed: boolean;
+  /** Values of each resistor that the circuit has. */
+  values: Partial<Record<PlainResistor, number[]>>;
+  resistorTolerance: number;
+  railTolerance: number;
+  ambient: [number, number];
   swingPeak?: number;
   gainMin?: number;
   gainMax?: number;
@@ -36,38 +59,23 @@ export type PlainBrief = {
   highCornerMin?: number;
   distortionMax?: number;
   distortionPeak?: number;
-  ambientMax: number;
   deratingVds: number;
   deratingPower: number;
   /** What each resistor may dissipate, W. */
   resistorPower: number;
+  /** Integer cents of a part for the whole build, and of a resistor (ohms, watts, volts); null where none is sold. */
+  partCents?: (part: PlainPart) => number | null;
+  resistorCents?: (ohms: number, watts: number, volts: number) => number | null;
 };
 
-export type PlainFit = {
+export type PlainFit = Record<PlainResistor, number> & {
   partId: number;
-  r1: number;
-  r2: number;
-  rd: number;
-  rs: number;
   bucket: number;
+  /** Assured swing. */
   nanovolts: number;
+  cents: number;
   supply: number;
 };
-
-/** Where a function that falls from above zero to below crosses it. */
-function halve(f: (x: number) => number, low: number, high: number): number {
-  let a = low;
-  let b = high;
-  for (let step = 0; step < 70; step++) {
-    const middle = (a + b) / 2;
-    if (f(middle) > 0) a = middle;
-    else b = middle;
-  }
-  return (a + b) / 2;
-}
-
-const saturated = (k: number, lambda: number, vgs: number, vt: number, vds: number) =>
-  vgs > vt ? k * (vgs - vt) * (vgs - vt) * (1 + lambda * vds) : 0;
 
 const current = (part: PlainPart, vgs: number, vds: number) => {
   const over = vgs - part.vtTyp;
@@ -76,29 +84,23 @@ const current = (part: PlainPart, vgs: number, vds: number) => {
   return part.kTyp * (2 * over * vds - vds * vds) * (1 + part.lambda * vds);
 };
 
-/** Second harmonic over the fundamental of the drain voltage for a sine at the gate. */
-function secondHarmonic(
-  part: PlainPart,
-  q: { id: number; vgs: number; vds: number },
-  load: number,
-  degeneration: number,
-  peak: number,
-): number {
+/** Second harmonic over the fundamental of the output voltage for a sine at the gate. */
+function secondHarmonic(part: PlainPart, stage: PlainStage, q: PlainPoint, peak: number): number {
   const samples = 64;
   let sin1 = 0;
   let cos2 = 0;
+  const fall = -signalVoltages(stage, 1, 0).vds;
   for (let n = 0; n < samples; n++) {
     const angle = (2 * Math.PI * n) / samples;
     const input = peak * Math.sin(angle);
-    const i = halve(
-      (x) =>
-        current(part, q.vgs + input - (x - q.id) * degeneration, q.vds - (x - q.id) * (load + degeneration)) -
-        x,
-      0,
-      q.id + q.vds / (load + degeneration),
-    );
-    sin1 += i * Math.sin(angle);
-    cos2 += i * Math.cos(2 * angle);
+    const balance = (i: number) => {
+      const moved = signalVoltages(stage, i - q.id, input);
+      return current(part, q.vgs + moved.vgs, q.vds + moved.vds) - i;
+    };
+    const i = halve(balance, 0, q.id + (q.vds + signalVoltages(stage, 0, input).vds) / fall);
+    const { out } = signalVoltages(stage, i - q.id, input);
+    sin1 += out * Math.sin(angle);
+    cos2 += out * Math.cos(2 * angle);
   }
   return Math.abs(cos2 / sin1);
 }
@@ -112,30 +114,38 @@ const divide = (a: Complex, b: Complex): Complex => {
 };
 const negative = (a: Complex): Complex => [-a[0], -a[1]];
 
-/** Magnitude from generator to drain at a frequency: the admittance matrix of gate, drain and source, eliminated. */
-function response(
-  part: PlainPart,
-  s: { gm: number; gds: number; load: number; rs: number; rsig: number; rin: number },
-  hertz: number,
-): number {
+type Small = {
+  gm: number;
+  gds: number;
+  /** At the drain, at the source, at the gate, and from drain to gate, ohms. */
+  drain: number;
+  source: number;
+  gate: number;
+  feedback: number;
+  rsig: number;
+  output: "drain" | "source";
+};
+
+/** Magnitude from generator to output at a frequency: the admittance matrix of gate, drain and source, eliminated. */
+function response(part: PlainPart, s: Small, hertz: number): number {
   const jw = (farads: number): Complex => [0, 2 * Math.PI * hertz * farads];
   const cgs = jw(part.ciss - part.crss);
-  const cgd = jw(part.crss);
+  const cgd = add(jw(part.crss), [1 / s.feedback, 0]);
   const cds = jw(part.coss - part.crss);
   // A wire is a nano-ohm here, so that one matrix serves every case.
   const drive = 1 / Math.max(s.rsig, 1e-9);
   const matrix: Complex[][] = [
-    [add([drive + 1 / s.rin, 0], add(cgs, cgd)), negative(cgd), negative(cgs), [drive, 0]],
+    [add([drive + 1 / s.gate, 0], add(cgs, cgd)), negative(cgd), negative(cgs), [drive, 0]],
     [
       add([s.gm, 0], negative(cgd)),
-      add([1 / s.load + s.gds, 0], add(cgd, cds)),
+      add([1 / Math.max(s.drain, 1e-9) + s.gds, 0], add(cgd, cds)),
       add([-s.gm - s.gds, 0], negative(cds)),
       [0, 0],
     ],
     [
       add([-s.gm, 0], negative(cgs)),
       add([-s.gds, 0], negative(cds)),
-      add([1 / Math.max(s.rs, 1e-9) + s.gm + s.gds, 0], add(cgs, cds)),
+      add([1 / Math.max(s.source, 1e-9) + s.gm + s.gds, 0], add(cgs, cds)),
       [0, 0],
     ],
   ];
@@ -149,102 +159,160 @@ function response(
   }
   const source = divide(matrix[2][3], matrix[2][2]);
   const drain = divide(add(matrix[1][3], negative(multiply(matrix[1][2], source))), matrix[1][1]);
-  return Math.hypot(drain[0], drain[1]);
+  return s.output === "drain" ? Math.hypot(drain[0], drain[1]) : Math.hypot(source[0], source[1]);
 }
 
 /** Whether the gain stays within 3 dB of mid-band from 1 Hz up to a frequency. */
-function staysUp(part: PlainPart, s: Parameters<typeof response>[1], hertz: number): boolean {
+function staysUp(part: PlainPart, s: Small, hertz: number): boolean {
   const least = response(part, s, 0) / Math.SQRT2;
   for (let f = 1; f < hertz; f *= 1.05) if (response(part, s, f) < least) return false;
   return response(part, s, hertz) >= least;
+}
+
+/** Volts across each resistor and what the positive rail gives. */
+function directFigures(
+  s: PlainStage,
+  id: number,
+): { volts: Partial<Record<PlainResistor, number>>; supply: number } {
+  if (s.circuit === "negative-rail") return { volts: { rg: 0, rd: id * s.rd, rs: id * s.rs }, supply: id };
+  if (s.circuit === "drain-feedback") {
+    const drain = s.r2 === 0 ? s.vdd - id * s.rd : (s.vdd / s.rd - id) / (1 / s.rd + 1 / (s.rg + s.r2));
+    const through = s.r2 === 0 ? 0 : drain / (s.rg + s.r2);
+    return {
+      volts: { rg: through * s.rg, r2: through * s.r2, rd: s.vdd - drain, rs: id * s.rs },
+      supply: (s.vdd - drain) / s.rd,
+    };
+  }
+  const through = s.vdd / (s.r1 + s.r2);
+  return {
+    volts: { r1: through * s.r1, r2: through * s.r2, rd: id * s.rd, rs: id * s.rs, rs2: id * s.rs2 },
+    supply: id + through,
+  };
+}
+
+/** The gate's own resistance to ground, ohms. */
+function gateResistance({ circuit, r1, r2, rg }: PlainStage): number {
+  if (circuit === "negative-rail") return rg;
+  if (circuit === "drain-feedback") return r2 === 0 ? 1e18 : r2;
+  return (r1 * r2) / (r1 + r2);
+}
+
+function smallSignal(brief: PlainBrief, part: PlainPart, s: PlainStage, q: PlainPoint): Small {
+  const beside = (r: number) => (s.load === null ? r : 1 / (1 / r + 1 / s.load));
+  const follows = s.circuit === "follower";
+  return {
+    gm: 2 * Math.sqrt(part.kTyp * q.id * (1 + part.lambda * q.vds)),
+    gds: (part.lambda * q.id) / (1 + part.lambda * q.vds),
+    drain: follows ? 0 : beside(s.rd),
+    source: follows ? beside(s.rs) : degeneration(s),
+    gate: gateResistance(s),
+    feedback: s.circuit === "drain-feedback" ? s.rg : 1e18,
+    rsig: brief.sourceImpedance,
+    output: follows ? "source" : "drain",
+  };
 }
 
 /** Solves one combination and checks every condition; null when one fails. */
 function tryCombination(
   brief: PlainBrief,
   part: PlainPart,
-  r1: number,
-  r2: number,
-  rd: number,
-  rs: number,
+  resistors: Record<PlainResistor, number>,
 ): PlainFit | null {
-  const { vdd } = brief;
-  const { vtTyp: vt, kTyp: k, lambda } = part;
-  const rin = (r1 * r2) / (r1 + r2);
+  const none = Number.POSITIVE_INFINITY;
+  const { vdd, vss, load, bypassed, circuit } = brief;
+  const stage: PlainStage = { circuit, vdd, vss, ...resistors, load, bypassed };
+  const q = plainPoint({ vt: part.vtTyp, k: part.kTyp, lambda: part.lambda }, stage);
+  if (!q) return null;
+  if (Math.min(q.up, q.down) < (brief.swingPeak ?? 0)) return null;
+  const { volts, supply } = directFigures(stage, q.id);
+  if (supply > (brief.supplyCurrentMax ?? none)) return null;
+  if (q.id * (stage.rs + stage.rs2) < (brief.sourceDropMin ?? 0)) return null;
+  const hottest = brief.ambient[1];
+  const cooling = hottest <= 25 ? 1 : Math.max(0, (part.tjMax - hottest) / (part.tjMax - 25));
+  if (q.id * q.vds > brief.deratingPower * part.pd25 * cooling) return null;
+  const across = Object.entries(volts).filter(([name]) => resistors[name as PlainResistor] > 0);
+  const heat = ([name, v]: [string, number]) => v ** 2 / resistors[name as PlainResistor];
+  if (across.some((entry) => heat(entry) > brief.resistorPower)) return null;
+  const small = smallSignal(brief, part, stage, q);
+  const gain = response({ ...part, ciss: 0, crss: 0, coss: 0 }, { ...small, rsig: 0 }, 0);
+  if (gain < (brief.gainMin ?? 0) || gain > (brief.gainMax ?? none)) return null;
+  const rin = 1 / (1 / small.gate + (1 + gain) / small.feedback);
   if (rin < (brief.inputResistanceMin ?? 0)) return null;
-  const vg = (vdd * r2) / (r1 + r2);
-  if (vg <= vt) return null;
-  const id = halve((i) => saturated(k, lambda, vg - i * rs, vt, vdd - i * (rd + rs)) - i, 0, vdd / (rd + rs));
-  const vgs = vg - id * rs;
-  const vds = vdd - id * (rd + rs);
-  if (vds < vgs - vt) return null;
-  const load = brief.load === null ? rd : 1 / (1 / rd + 1 / brief.load);
-  const degeneration = brief.sourceResistor === "unbypassed" ? rs : 0;
-  const slope = load + degeneration;
-  const vTransition = halve((v) => id + (vds - v) / slope - k * v * v * (1 + lambda * v), 0, vds);
-  const iTransition = k * vTransition * vTransition * (1 + lambda * vTransition);
-  const up = id * load;
-  const down = (iTransition - id) * load;
-  const swing = Math.min(up, down);
-  if (swing < (brief.swingPeak ?? 0)) return null;
-  const supply = id + vdd / (r1 + r2);
-  if (supply > (brief.supplyCurrentMax ?? Number.POSITIVE_INFINITY)) return null;
-  if (id * rs < (brief.sourceDropMin ?? 0)) return null;
-  const cooling =
-    brief.ambientMax <= 25 ? 1 : Math.max(0, (part.tjMax - brief.ambientMax) / (part.tjMax - 25));
-  if (id * vds > brief.deratingPower * part.pd25 * cooling) return null;
-  const heats = [(vdd - vg) ** 2 / r1, vg ** 2 / r2, id * id * rd, id * id * rs];
-  if (heats.some((heat) => heat > brief.resistorPower)) return null;
-  const gm = 2 * Math.sqrt(k * id * (1 + lambda * vds));
-  const gds = (lambda * id) / (1 + lambda * vds);
-  const small = { gm, gds, load, rs: degeneration, rsig: brief.sourceImpedance, rin };
-  const gain = (gm * load) / (1 + gm * degeneration + gds * (load + degeneration));
-  if (gain < (brief.gainMin ?? 0) || gain > (brief.gainMax ?? Number.POSITIVE_INFINITY)) return null;
   if (brief.distortionMax !== undefined && brief.distortionPeak) {
-    const hd2 = secondHarmonic(part, { id, vgs, vds }, load, degeneration, brief.distortionPeak / gain);
+    const hd2 = secondHarmonic(part, stage, q, brief.distortionPeak / gain);
     if (!(hd2 <= brief.distortionMax)) return null;
   }
   if (brief.highCornerMin !== undefined && !staysUp(part, small, brief.highCornerMin)) return null;
+  const assured = plainAssured({
+    vt: [part.vtMin, part.vtMax],
+    k: [part.kMin, part.kMax],
+    lambda: part.lambda,
+    tcVt: part.tcVt,
+    stage,
+    resistors: brief.resistorTolerance,
+    rail: brief.railTolerance,
+    ambient: brief.ambient,
+  });
+  let cents = 0;
+  if (brief.objective === "cost") {
+    if (assured < (brief.swingPeak ?? 0)) return null;
+    const lines = [
+      brief.partCents?.(part) ?? null,
+      ...across.map((entry) => {
+        const [name, v] = entry;
+        return brief.resistorCents?.(resistors[name as PlainResistor], heat(entry), v) ?? null;
+      }),
+    ];
+    for (const line of lines) {
+      if (line === null) return null;
+      cents += line;
+    }
+  }
   return {
     partId: part.id,
-    r1,
-    r2,
-    rd,
-    rs,
-    bucket: Math.floor((100 * Math.abs(up - down)) / (up + down)),
-    nanovolts: Math.round(swing * 1e9),
+    ...resistors,
+    bucket: Math.floor((100 * Math.abs(q.up - q.down)) / (q.up + q.down)),
+    nanovolts: Math.round(assured * 1e9),
+    cents,
     supply,
   };
+}
+
+const NAMES = ["r1", "r2", "rg", "rd", "rs", "rs2"] as const;
+
+/** Every choice of values, as a record of resistors. */
+function everyChoice(values: PlainBrief["values"]): Record<PlainResistor, number>[] {
+  let choices: Record<PlainResistor, number>[] = [{ r1: 0, r2: 0, rg: 0, rd: 0, rs: 0, rs2: 0 }];
+  for (const name of NAMES) {
+    const list = values[name];
+    if (list) choices = choices.flatMap((choice) => list.map((value) => ({ ...choice, [name]: value })));
+  }
+  return choices;
 }
 
 /** All fits of a brief in ranked order, by trying every combination. */
 export function tryEveryCombination(brief: PlainBrief, parts: readonly PlainPart[]): PlainFit[] {
   const fits: PlainFit[] = [];
-  const sources = brief.sourceResistor === "none" ? [0] : brief.source;
+  const choices = everyChoice(brief.values);
   for (const part of parts) {
-    if (brief.vdd > brief.deratingVds * part.vdss) continue;
-    for (const r1 of brief.divider) {
-      for (const r2 of brief.divider) {
-        for (const rd of brief.drain) {
-          for (const rs of sources) {
-            const fit = tryCombination(brief, part, r1, r2, rd, rs);
-            if (fit) fits.push(fit);
-          }
-        }
-      }
+    if (brief.vdd + brief.vss > brief.deratingVds * part.vdss) continue;
+    for (const resistors of choices) {
+      const fit = tryCombination(brief, part, resistors);
+      if (fit) fits.push(fit);
     }
   }
   const number = new Map(parts.map((part) => [part.id, part.partNumber]));
   const name = (fit: PlainFit) => number.get(fit.partId) ?? "";
+  const first = {
+    centred: (a: PlainFit, b: PlainFit) => a.bucket - b.bucket || b.nanovolts - a.nanovolts,
+    assured: (a: PlainFit, b: PlainFit) => b.nanovolts - a.nanovolts,
+    cost: (a: PlainFit, b: PlainFit) => a.cents - b.cents,
+  }[brief.objective];
   return fits.sort(
     (a, b) =>
-      a.bucket - b.bucket ||
-      b.nanovolts - a.nanovolts ||
+      first(a, b) ||
       (Math.abs(a.supply - b.supply) > 1e-12 * a.supply ? a.supply - b.supply : 0) ||
       (name(a) < name(b) ? -1 : name(a) > name(b) ? 1 : 0) ||
-      a.r1 - b.r1 ||
-      a.r2 - b.r2 ||
-      a.rd - b.rd ||
-      a.rs - b.rs,
+      NAMES.reduce((order, key) => order || a[key] - b[key], 0),
   );
 }

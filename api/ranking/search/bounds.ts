@@ -36,7 +36,7 @@ export function impossibleIn(
   span: Span,
   leastInput: number,
 ): Impossible | null {
-  const ends = endsOf(problem.vdd, device, block, span);
+  const ends = endsOf(problem.vdd + problem.vss, device, block, span);
   if (ends.gainHigh < problem.gainMin || ends.gainLow > problem.gainMax) return "gain";
   if (problem.highCornerMin > 0 && missesCorner(problem, device, block.first, ends, leastInput)) {
     return "high-corner";
@@ -47,10 +47,15 @@ export function impossibleIn(
   return null;
 }
 
-function endsOf(vdd: number, { k, lambda }: BoundDevice, { first, last }: Block, { low, high }: Span): Ends {
+function endsOf(
+  supply: number,
+  { k, lambda }: BoundDevice,
+  { first, last }: Block,
+  { low, high }: Span,
+): Ends {
   const { load } = first;
-  const vdsHigh = vdd - low * first.total;
-  const vdsLow = Math.max(0, vdd - high * last.total);
+  const vdsHigh = supply - low * first.total;
+  const vdsLow = Math.max(0, supply - high * last.total);
   const xLow = Math.sqrt(low / (k * (1 + lambda * vdsHigh)));
   const xHigh = Math.sqrt(high / (k * (1 + lambda * vdsLow)));
   const gmLow = 2 * Math.sqrt(k * low * (1 + lambda * vdsLow));
@@ -100,20 +105,21 @@ function missesCorner(
  * (J. L. W. V. Jensen, Acta Mathematica 30, 1906). The top lies at most A/(1 + R F') above the Q-point.
  */
 function leastSecondHarmonic(
-  { vdd, distortionPeak, swingPeak }: Problem,
+  { vdd, vss, distortionPeak, swingPeak }: Problem,
   { k, lambda }: BoundDevice,
   { first, last }: Block,
   { low, high }: Span,
   { xLow, xHigh, vdsLow, gainLow, gainHigh }: Ends,
 ): number {
+  const supply = vdd + vss;
   const amplitudeLow = distortionPeak / gainHigh;
   const amplitudeHigh = distortionPeak / gainLow;
   // A wave that cuts off is left to the exact test.
   if (amplitudeHigh >= xLow + low * first.degeneration) return 0;
   const betaLow = lambda * k * first.slope;
   const betaHigh = lambda * k * last.slope;
-  const kmLow = k * (1 + lambda * (vdd - high * (last.total - last.slope)));
-  const kmHigh = k * (1 + lambda * (vdd - low * (first.total - first.slope)));
+  const kmLow = k * (1 + lambda * (supply - high * (last.total - last.slope)));
+  const kmHigh = k * (1 + lambda * (supply - low * (first.total - first.slope)));
   const feedback = first.degeneration * kmLow * steepness(xLow, betaHigh);
   const top = xHigh + amplitudeHigh / (1 + feedback);
   const stretch = betaHigh * top * top;

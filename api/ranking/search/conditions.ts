@@ -4,15 +4,19 @@ import {
   type SmallSignalStage,
   transferSquared,
 } from "#shared/bias/high-corner";
+import { permittedDissipation } from "#shared/bias/thermal";
 import { distortionAt } from "#shared/bias/wave";
 import type { PassedOverReason } from "#shared/schemas/fits";
+import type { Catalog } from "../catalog";
 import type { Problem } from "../problem";
+import { pairResistance } from "./ratio-table";
 import type { LineResistances } from "./windows";
 
 /** The conditions in the order in which the search meets them. */
 export const CONDITIONS = [
   "rail-rating",
   "swing",
+  "assured-swing",
   "supply-current",
   "source-drop",
   "power-rating",
@@ -29,7 +33,23 @@ export type Condition = (typeof CONDITIONS)[number];
 /** One part with what it may dissipate. */
 export type Device = { row: number; vt: number; k: number; lambda: number; power: number } & Capacitances;
 
-export type Line = LineResistances & { rd: number; rs: number };
+/** Reads a part's typical device from the catalog. */
+export function readDevice(catalog: Catalog, row: number, problem: Problem): Device {
+  const thermal = { pd25: catalog.pd25[row], rthJa: catalog.rthJa[row], tjMax: catalog.tjMax[row] };
+  return {
+    row,
+    vt: catalog.vt[row],
+    k: catalog.k[row],
+    lambda: catalog.lambda[row],
+    cgs: catalog.cgs[row],
+    cgd: catalog.cgd[row],
+    cds: catalog.cds[row],
+    power: problem.deratingPower * permittedDissipation(thermal, problem.ambientMax),
+  };
+}
+
+/** A line with the greatest of its resistors, ohms: where the drain current heats most. */
+export type SearchLine = LineResistances & { gateSlope: number; greatest: number };
 
 /** A saturated operating point: overdrive V, drain current A, drain-source V, symmetric swing V. */
 export type Point = { x: number; id: number; vds: number; symmetric: number };
@@ -48,14 +68,14 @@ export function hasPointConditions(problem: Problem): boolean {
 export function failedCondition(
   problem: Problem,
   device: Device,
-  line: Line,
+  line: SearchLine,
   point: Point,
 ): Condition | null {
   const { x, id, vds } = point;
   if (point.symmetric < problem.swingPeak) return "swing";
-  if (id * line.rs < problem.sourceDropMin) return "source-drop";
+  if (id * line.gateSlope < problem.sourceDropMin) return "source-drop";
   if (vds * id > device.power) return "power-rating";
-  if (id * id * Math.max(line.rd, line.rs) > problem.resistorPower) return "resistor-rating";
+  if (id * id * line.greatest > problem.resistorPower) return "resistor-rating";
   const { gm, gds } = conductancesAt(device, point);
   const gain = (gm * line.load) / (1 + gds * line.slope + gm * line.degeneration);
   if (gain < problem.gainMin || gain > problem.gainMax) return "gain";
@@ -72,7 +92,7 @@ export function failedCondition(
 export function reachesCorner(
   problem: Problem,
   device: Device,
-  line: Line,
+  line: SearchLine,
   point: Point,
   r1: number,
   r2: number,
@@ -81,11 +101,12 @@ export function reachesCorner(
   if (highCornerMin === 0) return true;
   const stage: SmallSignalStage = {
     ...conductancesAt(device, point),
-    drain: line.load,
+    // A follower's drain is at signal ground, and its load is what its source terminal has.
+    drain: problem.circuit === "follower" ? 0 : line.load,
     source: line.degeneration,
-    gate: (r1 * r2) / (r1 + r2),
+    gate: pairResistance(r1, r2),
     feedback: null,
-    output: "drain",
+    output: problem.circuit === "follower" ? "source" : "drain",
     sourceImpedance,
   };
   // Cheap and necessary; the corner itself is only worked out for what passes.

@@ -1,18 +1,24 @@
+import type { Objective } from "#shared/schemas/fits";
+
 /**
- * One combination with what ranks it. `row` is the part's place in the catalog, which is in part-number order.
+ * One combination with what ranks it; less is better throughout. `row` is the part's place in the catalog, which is in
+ * part-number order.
  */
 export type Candidate = {
-  /** Centring error in whole per cent, rounded down. */
-  bucket: number;
-  /** Symmetric swing in whole nanovolts: less is rounding noise, and a tie must not depend on it. */
-  swing: number;
-  /** Drain and divider current together, A. */
+  /** Centring error in whole per cent (`centred`), assured swing in nanovolts below zero, or integer cents. */
+  major: number;
+  /** `centred`: the assured swing in nanovolts, below zero; else 0. */
+  minor: number;
+  /** What the stage takes from its rail, A. */
   supply: number;
   row: number;
-  r1: number;
-  r2: number;
-  rd: number;
-  rs: number;
+  /** The resistors at the gate, ohms: R1 and R2, or 0 and RG. */
+  first: number;
+  second: number;
+  /** The resistors of the line, ohms, in the circuit's order. */
+  a: number;
+  b: number;
+  c: number;
 };
 
 /** Centring error in whole per cent, rounded down, because less is noise. */
@@ -20,31 +26,78 @@ export function bucketOf(towardCutoff: number, towardOhmic: number): number {
   return Math.floor((100 * Math.abs(towardCutoff - towardOhmic)) / (towardCutoff + towardOhmic));
 }
 
+/** Swing in whole nanovolts: less is rounding noise, and a tie must not depend on it. */
 export function nanovolts(volts: number): number {
   return Math.round(volts * 1e9);
 }
 
+/** What ranks a combination before its ties are looked at. */
+export function rankOf(
+  objective: Objective,
+  bucket: number,
+  assuredNanovolts: number,
+  cents: number,
+): Pick<Candidate, "major" | "minor"> {
+  if (objective === "centred") return { major: bucket, minor: -assuredNanovolts };
+  return { major: objective === "assured" ? -assuredNanovolts : cents, minor: 0 };
+}
+
 /**
- * The order of the `centred` objective: least centring error in whole per cent, then the greater swing; ties by the
- * smaller supply current, part number, R1, R2, RD, RS.
+ * The order of every objective: `centred` by least centring error in whole per cent, then the greater assured swing;
+ * `assured` by the greater assured swing; `cost` by the lesser cost. Ties by the smaller supply current, part number,
+ * R1, R2, RG, RD, RS, RS2.
  *
  * @returns below zero when a comes first
  */
 export function compareCandidates(a: Candidate, b: Candidate): number {
   return (
-    a.bucket - b.bucket ||
-    b.swing - a.swing ||
+    a.major - b.major ||
+    a.minor - b.minor ||
     a.supply - b.supply ||
     a.row - b.row ||
-    a.r1 - b.r1 ||
-    a.r2 - b.r2 ||
-    a.rd - b.rd ||
-    a.rs - b.rs
+    a.first - b.first ||
+    a.second - b.second ||
+    a.a - b.a ||
+    a.b - b.b ||
+    a.c - b.c
   );
 }
 
+/** Where a search puts what it finds. */
+export type Best = {
+  /** The candidate that a new one must not come after; null while anything gets in. */
+  readonly threshold: Candidate | null;
+  /** Takes a candidate in if it belongs there, and says whether it did. */
+  add: (candidate: Candidate) => boolean;
+};
+
+/**
+ * The best of one part. Until something is found nothing is left out, so that it is known whether the part fits at
+ * all; from then on only what comes before the bar matters, because the part's place after it is of no interest.
+ */
+export class PartBest implements Best {
+  readonly #bar: Candidate | null;
+  found: Candidate | null = null;
+
+  /** @param bar the last place of the answer so far, when all its places are taken */
+  constructor(bar: Candidate | null) {
+    this.#bar = bar;
+  }
+
+  get threshold(): Candidate | null {
+    if (!this.found || !this.#bar) return this.found;
+    return compareCandidates(this.#bar, this.found) < 0 ? this.#bar : this.found;
+  }
+
+  add(candidate: Candidate): boolean {
+    if (this.found && compareCandidates(candidate, this.found) >= 0) return false;
+    this.found = candidate;
+    return true;
+  }
+}
+
 /** Keeps the best so many candidates; a heap with the worst on top. */
-export class BestCandidates {
+export class BestCandidates implements Best {
   readonly #limit: number;
   readonly #bar: Candidate | null;
   readonly #heap: Candidate[] = [];
@@ -58,12 +111,10 @@ export class BestCandidates {
     this.#bar = bar;
   }
 
-  /** The candidate that a new one must not come after; null while anything gets in. */
   get threshold(): Candidate | null {
     return this.#heap.length < this.#limit ? this.#bar : this.#heap[0];
   }
 
-  /** Takes a candidate in if it belongs there, and says whether it did. */
   add(candidate: Candidate): boolean {
     const heap = this.#heap;
     if (this.#bar && compareCandidates(candidate, this.#bar) > 0) return false;

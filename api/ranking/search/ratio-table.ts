@@ -81,6 +81,21 @@ export function filterRatioTable(table: RatioTable, allows: (r1: number, r2: num
   };
 }
 
+/** The table of a gate that one resistor ties to ground: its voltage is given, whatever the resistor. */
+export function singleRatioTable(values: readonly number[]): RatioTable {
+  return {
+    ratios: Float64Array.of(0),
+    offsets: Uint32Array.of(0, values.length),
+    r1: new Float64Array(values.length),
+    r2: Float64Array.from(values),
+  };
+}
+
+/** R1 || R2 of a pair, ohms; of a gate resistor alone, itself. */
+export function pairResistance(r1: number, r2: number): number {
+  return r1 === 0 ? r2 : (r1 * r2) / (r1 + r2);
+}
+
 /** Index of the first ratio that is not above the given one, in a falling list; its length when all are above. */
 export function firstAtMost(ratios: Float64Array, ratio: number): number {
   let low = 0;
@@ -91,4 +106,23 @@ export function firstAtMost(ratios: Float64Array, ratio: number): number {
     else high = middle;
   }
   return low;
+}
+
+/** Index of the first ratio that is below the given one, in a falling list; its length when none is. */
+export function firstBelow(ratios: Float64Array, ratio: number): number {
+  let low = 0;
+  let high = ratios.length;
+  while (low < high) {
+    const middle = (low + high) >>> 1;
+    if (ratios[middle] >= ratio) low = middle + 1;
+    else high = middle;
+  }
+  return low;
+}
+
+/** The least input resistance of a table, ohms; Infinity when it is empty. */
+export function leastResistance({ r1, r2 }: RatioTable): number {
+  let least = Number.POSITIVE_INFINITY;
+  for (let at = 0; at < r1.length; at++) least = Math.min(least, pairResistance(r1[at], r2[at]));
+  return least;
 }

@@ -1,0 +1,446 @@
+import type { LineCircuit } from "#shared/bias/circuits/line";
+import { LINE_CIRCUITS, type LineCircuitName } from "#shared/bias/circuits/lines";
+import { saturationCurrent, saturationOverdrive } from "#shared/bias/saturation";
+import { transitionVoltage } from "#shared/bias/swing";
+import type { Catalog } from "../catalog";
+import type { Problem } from "../problem";
+import { AssuredSwing, type Triple } from "./assured";
+import { impossibleIn } from "./bounds";
+import { type Box, Boxes, type Demand } from "./boxes";
+import {
+  CONDITIONS,
+  type Condition,
+  type Device,
+  failedCondition,
+  hasPointConditions,
+  type Point,
+  reachesCorner,
+  readDevice,
+  type SearchLine,
+} from "./conditions";
+import { type Best, bucketOf, nanovolts, rankOf } from "./order";
+import { type PartSpread, partSpread } from "./part-spread";
+import { filterRatioTable, firstAtMost, firstBelow, leastResistance, type RatioTable } from "./ratio-table";
+import { emptyLine, spreadEnds } from "./spread-ends";
+import {
+  currentAtCentring,
+  currentForOhmicRoom,
+  overdriveAt,
+  type Span,
+  spansWithinDissipation,
+} from "./windows";
+
+/** Windows are widened by this share, so that rounding never hides a ratio; each is then tested exactly. */
+const SLACK = 1e-9;
+/** How often a span is halved to cut away what can't meet a condition: 32 slices. */
+const HALVINGS = 5;
+/** The least assured swing that shows in the order: half a nanovolt. */
+const LEAST_LEVEL = 0.5e-9;
+
+const NO_DEVICE: Device = { row: 0, vt: 0, k: 1, lambda: 0, power: 0, cgs: 0, cgd: 0, cds: 0 };
+const NO_SPREAD: PartSpread = {
+  lambda: 0,
+  tcVt: 0,
+  cold: 0,
+  hot: 0,
+  vtMax25: 0,
+  kMin25: 1,
+  vtMaxAt: [0, 0],
+  kMinAt: [1, 1],
+  vtMinAt: [0, 0],
+  kMaxAt: [1, 1],
+  temperatures: 1,
+};
+
+/**
+ * The exact search of one brief over circuits whose gate voltage comes from the gate's resistors alone. The lines of a
+ * part (its RD, RS and so on) are a box that is halved again and again; `Boxes` leaves out what can't hold anything
+ * asked for. On a single line the room toward cutoff rises and the room toward the ohmic region falls with the gate
+ * voltage, nominally and for the worst builds, so what is asked for is a window in the sorted list of divider ratios.
+ * Nothing is sampled.
+ */
+export class LineSearch {
+  readonly #problem: Problem;
+  readonly #circuit: LineCircuit;
+  /** Every ratio the values allow, to tell a missing value from a pair that is barred. */
+  readonly #every: RatioTable;
+  readonly #table: RatioTable;
+  readonly #leastInput: number;
+  readonly #supply: number;
+  readonly #gateSupply: number;
+  readonly #values: readonly (readonly number[])[];
+  readonly #boxes: Boxes;
+  readonly #assured: AssuredSwing;
+  readonly #pointwise: boolean;
+  readonly #shouldStop: () => boolean;
+  readonly #filled = emptyLine();
+  #stopped = false;
+  #device: Device = NO_DEVICE;
+  #spread: PartSpread = NO_SPREAD;
+  #triple: Triple = [0, 0, 0];
+  readonly #line: SearchLine = { load: 0, degeneration: 0, slope: 0, total: 0, gateSlope: 0, greatest: 0 };
+  /** How far the part's combinations came: the furthest condition that one failed. */
+  #furthest = 0;
+  /** What the list asks of the next, as of the last look at it. */
+  readonly #demand: Demand = { centring: 1, level: 0, supply: Number.POSITIVE_INFINITY };
+  /** The supply current to beat where the list has nothing assured to beat; null where it has. */
+  #tie: number | null = null;
+  /** Where the last slice of the present line ended: widened slices may touch, and no ratio is to be met twice. */
+  #walkedTo = 0;
+  /** The line where the last part had its best fit, as indices: the next is likely to have it near. */
+  #hint: Triple | null = null;
+  #hinted: Triple | null = null;
+
+  /**
+   * @param problem the brief in numbers
+   * @param every the ratio table of the values at the gate
+   * @param shouldStop asked often: whether to give up, as nobody waits any more or the time is over
+   */
+  constructor(problem: Problem, every: RatioTable, shouldStop: () => boolean = () => false) {
+    const name = problem.circuit as LineCircuitName;
+    const { vdd, vss, inputResistanceMin, resistorPower, values } = problem;
+    this.#problem = problem;
+    this.#circuit = LINE_CIRCUITS[name];
+    this.#shouldStop = shouldStop;
+    this.#every = every;
+    this.#supply = vdd + vss;
+    this.#gateSupply = vss > 0 ? vss : vdd;
+    const divides = this.#circuit.gate.length === 2;
+    this.#table = filterRatioTable(every, (r1, r2) => {
+      if (!divides) return r2 >= inputResistanceMin;
+      const vg = vdd / (1 + r1 / r2);
+      return (
+        (r1 * r2) / (r1 + r2) >= inputResistanceMin &&
+        (vdd - vg) ** 2 / r1 <= resistorPower &&
+        vg ** 2 / r2 <= resistorPower
+      );
+    });
+    this.#leastInput = leastResistance(this.#table);
+    this.#values = [0, 1, 2].map((axis) => {
+      const key = this.#circuit.axes[axis];
+      return key ? values[key] : [0];
+    });
+    const ends = spreadEnds(problem, name, this.#circuit);
+    const [greatest] = values.r1.slice(-1);
+    this.#boxes = new Boxes(problem, this.#circuit, this.#values, ends, {
+      leastDivider: divides ? vdd / (2 * greatest) : 0,
+      leastInput: this.#leastInput,
+    });
+    this.#assured = new AssuredSwing(problem, this.#circuit, ends);
+    this.#pointwise = hasPointConditions(problem);
+  }
+
+  /**
+   * Adds a part's combinations to the list of the best, as far as they can enter it.
+   *
+   * @param row the part's row in the catalog
+   * @returns why the part has no fit: the furthest condition that any of its combinations failed, only meaningful when
+   * nothing was added; null when the search was stopped and the part is not done
+   */
+  part(catalog: Catalog, row: number, best: Best): Condition | null {
+    const { deratingVds } = this.#problem;
+    if (this.#supply > deratingVds * catalog.vdss[row]) return "rail-rating";
+    this.#furthest = 0;
+    this.#device = readDevice(catalog, row, this.#problem);
+    this.#spread = partSpread(catalog, row, this.#problem);
+    const [a, b, c] = this.#values;
+    if (a.length * b.length * c.length === 0 || this.#every.ratios.length === 0) return "resistor-values";
+    this.#hinted = this.#hint;
+    if (this.#hinted) this.#searchLine(...this.#hinted, best);
+    this.#searchBox([0, a.length - 1, 0, b.length - 1, 0, c.length - 1], best);
+    return this.#stopped ? null : CONDITIONS[this.#furthest];
+  }
+
+  #fail(condition: Condition): void {
+    this.#furthest = Math.max(this.#furthest, CONDITIONS.indexOf(condition));
+  }
+
+  /** Reads from the list what the next candidate has to have. */
+  #lookAt(best: Best): Demand {
+    const { objective, swingPeak } = this.#problem;
+    const demand = this.#demand;
+    const threshold = best.threshold;
+    demand.centring = 1;
+    demand.level = objective === "cost" ? swingPeak : 0;
+    demand.supply = Number.POSITIVE_INFINITY;
+    this.#tie = null;
+    if (!threshold || objective === "cost") return demand;
+    const { major, minor, supply } = threshold;
+    if (objective === "centred" && major < 99) demand.centring = (major + 1) / 100;
+    const reached = objective === "assured" ? -major : major === 0 ? -minor : -1;
+    if (reached > 0) demand.level = (reached - 1) * 1e-9;
+    // Where nothing is assured, the smaller supply current comes first.
+    if (reached === 0) this.#tie = supply;
+    return demand;
+  }
+
+  #mightHold(box: Box, best: Best): boolean {
+    const demand = this.#lookAt(best);
+    if (this.#tie === null) return this.#boxes.mightHold(this.#device, this.#spread, box, demand);
+    demand.level = LEAST_LEVEL;
+    if (this.#boxes.mightHold(this.#device, this.#spread, box, demand)) return true;
+    demand.level = 0;
+    demand.supply = this.#tie;
+    return this.#boxes.mightHold(this.#device, this.#spread, box, demand);
+  }
+
+  /** All lines of a box, halved until it can be left out or is a single line. */
+  #searchBox(box: Box, best: Best): void {
+    this.#stopped ||= this.#shouldStop();
+    if (this.#stopped) return;
+    const [a0, a1, b0, b1, c0, c1] = box;
+    if (a0 === a1 && b0 === b1 && c0 === c1) {
+      const hinted = this.#hinted;
+      if (hinted && hinted[0] === a0 && hinted[1] === b0 && hinted[2] === c0) return;
+      this.#searchLine(a0, b0, c0, best);
+      return;
+    }
+    if (!this.#mightHold(box, best)) {
+      if (this.#boxes.failed) this.#fail(this.#boxes.failed);
+      return;
+    }
+    const [a, b, c] = this.#values;
+    const widthA = a[a1] / a[a0] || 1;
+    const widthB = b[b1] / b[b0] || 1;
+    const widthC = c[c1] / c[c0] || 1;
+    if (widthA >= widthB && widthA >= widthC) {
+      const middle = (a0 + a1) >> 1;
+      this.#searchBox([middle + 1, a1, b0, b1, c0, c1], best);
+      this.#searchBox([a0, middle, b0, b1, c0, c1], best);
+    } else if (widthB >= widthC) {
+      const middle = (b0 + b1) >> 1;
+      this.#searchBox([a0, a1, b0, middle, c0, c1], best);
+      this.#searchBox([a0, a1, middle + 1, b1, c0, c1], best);
+    } else {
+      const middle = (c0 + c1) >> 1;
+      this.#searchBox([a0, a1, b0, b1, c0, middle], best);
+      this.#searchBox([a0, a1, b0, b1, middle + 1, c1], best);
+    }
+  }
+
+  /** All gate voltages of one line. */
+  #searchLine(a: number, b: number, c: number, best: Best): void {
+    const line = this.#line;
+    const triple: Triple = [this.#values[0][a], this.#values[1][b], this.#values[2][c]];
+    const { load, bypassed } = this.#problem;
+    this.#circuit.fill(this.#filled, load ?? Number.POSITIVE_INFINITY, bypassed, ...triple);
+    line.load = this.#filled.output;
+    line.degeneration = this.#filled.degeneration;
+    line.slope = this.#filled.slope;
+    line.total = this.#filled.total;
+    line.gateSlope = this.#filled.gateSlope;
+    line.greatest = Math.max(...triple);
+    this.#triple = triple;
+    const span = this.#allowedSpan(line);
+    if (!span) return;
+    const spans = spansWithinDissipation(span, this.#supply, line.total, this.#device.power);
+    if (spans.length === 0) this.#fail("power-rating");
+    this.#walkedTo = 0;
+    const before = best.threshold;
+    for (const within of spans) {
+      const slices = this.#pointwise ? this.#possibleSlices(line, within, HALVINGS) : [within];
+      for (const slice of slices) this.#walk(line, slice, best);
+    }
+    if (best.threshold !== before) this.#hint = [a, b, c];
+  }
+
+  /** The currents that the conditions which are plain ranges allow on a line; null where there are none. */
+  #allowedSpan(line: SearchLine): Span | null {
+    const problem = this.#problem;
+    const { k, lambda } = this.#device;
+    let low = problem.swingPeak / line.load;
+    let high = currentForOhmicRoom(this.#supply, k, lambda, line, problem.swingPeak);
+    if (low > high * (1 + SLACK)) {
+      this.#fail("swing");
+      return null;
+    }
+    high = Math.min(high, problem.supplyCurrentMax - this.#boxes.leastDivider);
+    if (low > high * (1 + SLACK)) {
+      this.#fail("supply-current");
+      return null;
+    }
+    low = Math.max(low, problem.sourceDropMin / line.gateSlope || 0);
+    if (low > high * (1 + SLACK)) {
+      this.#fail("source-drop");
+      return null;
+    }
+    high = Math.min(high, Math.sqrt(problem.resistorPower / line.greatest));
+    if (low > high * (1 + SLACK)) {
+      this.#fail("resistor-rating");
+      return null;
+    }
+    return { low: low * (1 - SLACK), high: high * (1 + SLACK) };
+  }
+
+  #impossible(line: SearchLine, span: Span): Condition | null {
+    return impossibleIn(this.#problem, this.#device, { first: line, last: line }, span, this.#leastInput);
+  }
+
+  /** Halves a span again and again and keeps the slices in which every condition might be met. */
+  #possibleSlices(line: SearchLine, span: Span, halvings: number): Span[] {
+    const impossible = this.#impossible(line, span);
+    if (impossible) {
+      this.#fail(impossible);
+      return [];
+    }
+    if (halvings === 0) return [span];
+    const middle = 0.5 * (span.low + span.high);
+    const left = this.#possibleSlices(line, { low: span.low, high: middle }, halvings - 1);
+    const right = this.#possibleSlices(line, { low: middle, high: span.high }, halvings - 1);
+    const last = left[left.length - 1];
+    const first = right[0];
+    if (last && first && last.high === first.low) {
+      first.low = last.low;
+      left.pop();
+    }
+    return left.concat(right);
+  }
+
+  /** The gate voltage that a current takes on a line, V. */
+  #gateAt({ total, gateSlope }: SearchLine, current: number): number {
+    const { vt, k, lambda } = this.#device;
+    return (
+      vt + (current > 0 ? overdriveAt(this.#supply, k, lambda, total, current) : 0) + current * gateSlope
+    );
+  }
+
+  /** Walks the ratios of a span of currents. */
+  #walk(line: SearchLine, span: Span, best: Best): void {
+    const { inputResistanceMin } = this.#problem;
+    const low = this.#gateAt(line, span.low) - SLACK * this.#supply;
+    const high = this.#gateAt(line, span.high) + SLACK * this.#supply;
+    const from = Math.max(this.#walkedTo, this.#firstAtLeast(this.#table, low));
+    const to = this.#firstAbove(this.#table, high);
+    if (from >= to) {
+      const barred = this.#firstAtLeast(this.#every, low) < this.#firstAbove(this.#every, high);
+      if (!barred) this.#fail("resistor-values");
+      else this.#fail(inputResistanceMin > 0 ? "input-resistance" : "resistor-rating");
+      return;
+    }
+    this.#walkedTo = to;
+    const centre = currentAtCentring(this.#supply, this.#device.k, this.#device.lambda, line, 0);
+    this.#visit(line, from, to, this.#firstAtLeast(this.#table, this.#gateAt(line, centre)), best);
+  }
+
+  /** Index of the first ratio whose gate voltage is not below the given one. */
+  #firstAtLeast({ ratios }: RatioTable, vg: number): number {
+    return vg <= 0 ? 0 : firstAtMost(ratios, this.#gateSupply / vg - 1);
+  }
+
+  /** Index of the first ratio whose gate voltage is above the given one. */
+  #firstAbove({ ratios }: RatioTable, vg: number): number {
+    return vg <= 0 ? 0 : firstBelow(ratios, this.#gateSupply / vg - 1);
+  }
+
+  /**
+   * Tries the ratios from one index to another, the likeliest first; what is found narrows the rest on both sides.
+   *
+   * @param likeliest where to begin
+   */
+  #visit(line: SearchLine, from: number, to: number, likeliest: number, best: Best): void {
+    if (from >= to) return;
+    const [low, high] = this.#narrow(line, from, to, best);
+    if (low >= high) return;
+    const at = likeliest >= low && likeliest < high ? likeliest : (low + high) >> 1;
+    this.#tryRatio(line, at, best);
+    this.#visit(line, low, at, (low + at) >> 1, best);
+    this.#visit(line, at + 1, high, (at + 1 + high) >> 1, best);
+  }
+
+  /** The part of a run of ratios that can still enter the list. */
+  #narrow(line: SearchLine, from: number, to: number, best: Best): readonly [number, number] {
+    const demand = this.#lookAt(best);
+    const { k, lambda } = this.#device;
+    const { ratios } = this.#table;
+    let low = from;
+    let high = to;
+    let most = Number.POSITIVE_INFINITY;
+    if (demand.centring < 1) {
+      const c = demand.centring;
+      const least = currentAtCentring(this.#supply, k, lambda, line, -c) * (1 - SLACK);
+      most = currentAtCentring(this.#supply, k, lambda, line, c) * (1 + SLACK);
+      low = Math.max(low, this.#firstAtLeast(this.#table, this.#gateAt(line, least) * (1 - SLACK)));
+    }
+    if (this.#tie !== null && !this.#assured.window(this.#spread, this.#triple, LEAST_LEVEL)) {
+      most = Math.min(most, this.#tie - this.#boxes.leastDivider);
+      if (!(most > 0)) return [low, low];
+    }
+    if (most < Number.POSITIVE_INFINITY) {
+      high = Math.min(high, this.#firstAbove(this.#table, this.#gateAt(line, most) * (1 + SLACK)));
+    }
+    if (low >= high || demand.level <= 0) return [low, high];
+    if (!this.#assured.window(this.#spread, this.#triple, demand.level)) {
+      if (this.#problem.objective === "cost") this.#fail("assured-swing");
+      return [low, low];
+    }
+    low = Math.max(low, firstAtMost(ratios, this.#assured.high * (1 + SLACK)));
+    high = Math.min(high, firstBelow(ratios, this.#assured.low * (1 - SLACK)));
+    return [low, high];
+  }
+
+  /** Solves one ratio and offers its pairs. */
+  #tryRatio(line: SearchLine, at: number, best: Best): void {
+    const device = this.#device;
+    const ratio = this.#table.ratios[at];
+    const supply = this.#supply;
+    const drive = this.#gateSupply / (1 + ratio) - device.vt;
+    if (drive <= 0) return;
+    const x = saturationOverdrive(device, supply, drive, line.gateSlope, line.total);
+    const id = saturationCurrent(device, supply, x, line.total);
+    const vds = supply - id * line.total;
+    if (vds < x) return;
+    const vT = transitionVoltage(device.k, device.lambda, id + vds / line.slope, line.slope);
+    const iT = device.k * vT * vT * (1 + device.lambda * vT);
+    const towardCutoff = id * line.load;
+    const towardOhmic = (iT - id) * line.load;
+    const bucket = bucketOf(towardCutoff, towardOhmic);
+    const threshold = best.threshold;
+    const { objective } = this.#problem;
+    let least = 0;
+    if (threshold && objective === "centred") {
+      if (bucket > threshold.major) return;
+      if (bucket === threshold.major) least = (-threshold.minor - 1) * 1e-9;
+    }
+    if (threshold && objective === "assured") least = (-threshold.major - 1) * 1e-9;
+    const point = { x, id, vds, symmetric: Math.min(towardCutoff, towardOhmic) };
+    const assured = this.#assured.swing(this.#spread, this.#triple, ratio, least);
+    if (assured < least) return;
+    // The bounds at this one current are cheaper than the wave, and mostly decide.
+    const failed =
+      (this.#pointwise && this.#impossible(line, { low: id, high: id })) ||
+      failedCondition(this.#problem, device, line, point) ||
+      (objective === "cost" && assured < this.#problem.swingPeak ? "assured-swing" : null);
+    if (failed) this.#fail(failed);
+    else this.#offerPairs(line, at, point, bucket, nanovolts(assured), best);
+  }
+
+  /** Offers the pairs of one ratio, the smallest divider current first. */
+  #offerPairs(line: SearchLine, at: number, point: Point, bucket: number, assured: number, best: Best): void {
+    const problem = this.#problem;
+    const { offsets, r1, r2 } = this.#table;
+    const [a, b, c] = this.#triple;
+    for (let pair = offsets[at]; pair < offsets[at + 1]; pair++) {
+      const supply = point.id + (r1[pair] > 0 ? problem.vdd / (r1[pair] + r2[pair]) : 0);
+      // Later pairs draw more still.
+      if (supply > problem.supplyCurrentMax) {
+        this.#fail("supply-current");
+        return;
+      }
+      if (!reachesCorner(problem, this.#device, line, point, r1[pair], r2[pair])) {
+        this.#fail("high-corner");
+        continue;
+      }
+      const taken = best.add({
+        ...rankOf(problem.objective, bucket, assured, 0),
+        supply,
+        row: this.#device.row,
+        first: r1[pair],
+        second: r2[pair],
+        a,
+        b,
+        c,
+      });
+      if (!taken) return;
+    }
+  }
+}
