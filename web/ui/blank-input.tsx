@@ -78,7 +78,7 @@ export function BlankSelect<T extends string>(props: BlankSelectProps<T>) {
       aria-describedby={error ? errorId : undefined}
       value={value}
       onChange={choose}
-      className={classNames(BLANK, "appearance-none")}
+      className={classNames(BLANK, "max-w-full appearance-none text-ellipsis")}
       style={{ width: `calc(${(chosen?.label ?? value).length}ch + 1rem)` }}
     >
       {options.map((option) => (

@@ -1,11 +1,13 @@
-import { type ReactNode, useId, useState } from "react";
+import { type ReactNode, useEffect, useId, useState } from "react";
 import { useWatch } from "react-hook-form";
 import { useSearchParams } from "react-router-dom";
 import type { Brief } from "#shared/schemas/brief";
 import { OBJECTIVES, type Objective } from "#shared/schemas/fits";
 import { Schematic } from "../../figures/schematics/schematic";
+import { problemOf } from "../../lib/api";
 import { isSameBrief, writeBriefParameter } from "../../lib/brief-link";
 import { conditionsInWords } from "../../lib/brief-words";
+import { applyProblem } from "../../lib/form-problem";
 import { Button } from "../../ui/button";
 import type { DataTableSort } from "../../ui/data-table-model";
 import { FieldError } from "../../ui/field";
@@ -34,6 +36,9 @@ export function BriefWorkbench({ brief, ranked, briefId, title }: BriefWorkbench
   const [open, setOpen] = useState(false);
   const objective = readObjective(search.get("by"));
   const ranking = useRanking(ranked, objective);
+  useEffect(() => {
+    if (ranking.error) applyProblem(form, problemOf(ranking.error), "brief.");
+  }, [form, ranking.error]);
   const errorId = useId();
   const conditionsId = useId();
 
@@ -61,7 +66,7 @@ export function BriefWorkbench({ brief, ranked, briefId, title }: BriefWorkbench
     <>
       {title({ brief: current, isValid: complaints.length === 0, validate })}
       <form onSubmit={submit} noValidate className="mt-4">
-        <div className="grid gap-x-8 gap-y-4 xl:grid-cols-[minmax(0,1fr)_auto]">
+        <div className="grid gap-x-8 gap-y-4 lg:grid-cols-[minmax(0,1fr)_auto]">
           <div className="min-w-0">
             <Sentence form={form} errorId={errorId} onUnreadable={onUnreadable} onCircuit={chooseCircuit} />
             <div id={errorId} className="mt-2 flex flex-col gap-1 empty:hidden">

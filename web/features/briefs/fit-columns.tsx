@@ -48,7 +48,7 @@ export function setColumns(context: ColumnsContext): DataTableColumn<Fit>[] {
       </span>
     ),
     name: "Room each way",
-    className: "min-w-56",
+    className: "min-w-52",
     cell: ({ bias, assured }) =>
       bias.swing && (
         <BalanceBar
@@ -86,6 +86,8 @@ export function setColumns(context: ColumnsContext): DataTableColumn<Fit>[] {
       id: "yield",
       header: "yield",
       numeric: true,
+      // As wide as what it waits for.
+      className: "min-w-[5.5rem]",
       hideable: true,
       cell: (fit) => <YieldCell brief={brief} fit={fit} isProvisional={isProvisional} />,
     },
@@ -177,13 +179,19 @@ function AssuredSwing({ volts }: { volts: number }) {
   return <Explained explanation="some builds leave saturation">0 V</Explained>;
 }
 
+/** One stage's share in cents: whole ones, but a tenth of one where that would leave a single digit. */
+function shareOf(cents: number, builds: number): number {
+  const share = cents / builds;
+  return share < 10 ? Math.round(share * 10) / 10 : Math.round(share);
+}
+
 function Cost({ cents, builds }: { cents: number | null; builds: number }) {
   if (cents === null) return <Explained explanation="a price is missing">—</Explained>;
   return (
     <>
       <span className="block">{formatCents(cents)}</span>
       <span className="block text-quiet text-xs">
-        {formatCents(Math.round((cents / builds) * 10) / 10)}
+        {formatCents(shareOf(cents, builds))}
         <span className="font-sans"> each</span>
       </span>
     </>

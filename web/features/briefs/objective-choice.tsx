@@ -19,7 +19,7 @@ type ObjectiveChoiceProps = {
 export function ObjectiveChoice({ brief, objective, onChange }: ObjectiveChoiceProps) {
   const swing = formatQuantity(brief.swing.peak, "V", { exact: true });
   return (
-    <div>
+    <div className="md:ml-auto md:text-right">
       <Segmented label="Rank by" labelHidden options={OPTIONS} value={objective} onChange={onChange} />
       {objective === "cost" && (
         <p className="pt-1 text-quiet text-sm">Only fits whose assured swing is at least {swing}.</p>

@@ -7,6 +7,7 @@ import { PageTitle } from "../../ui/page-title";
 import { Formula, WithFormulas } from "./formula";
 import type { MethodEntry, MethodSection } from "./section";
 import { CAUTIONS } from "./sections/cautions";
+import { CIRCUITS } from "./sections/circuits";
 import { DEVICE } from "./sections/device";
 import { Q_POINT } from "./sections/q-point";
 import { ASSUMPTIONS, RANKING, VALUES } from "./sections/ranking";
@@ -14,7 +15,7 @@ import { FREQUENCY, RATINGS } from "./sections/ratings";
 import { SIGNAL } from "./sections/signal";
 import { SWING } from "./sections/swing";
 
-const SECTIONS: readonly MethodSection[] = [DEVICE, Q_POINT, SWING, SIGNAL, FREQUENCY, RATINGS];
+const SECTIONS: readonly MethodSection[] = [DEVICE, Q_POINT, SWING, SIGNAL, FREQUENCY, RATINGS, CIRCUITS];
 
 /** What follows the formulas. */
 const CLOSING = [
