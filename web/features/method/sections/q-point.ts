@@ -6,7 +6,7 @@ export const Q_POINT: MethodSection = {
   id: "q-point",
   title: "The Q-point",
   opening:
-    "The circuit is the four-resistor common-source stage: `R_1` from the rail to the gate, `R_2` from the gate to ground, `R_D` from the rail to the drain, `R_S` from the source to ground (it may be a wire), bypassed or not. A load `R_L` follows through a capacitor, or there is none.",
+    "These are the formulas of the four-resistor common-source stage; the other circuits follow under Circuits. `R_1` runs from the rail to the gate, `R_2` from the gate to ground, `R_D` from the rail to the drain, `R_S` from the source to ground (it may be a wire), bypassed or not. A load `R_L` follows through a capacitor, or there is none.",
   entries: [
     {
       id: "gate-voltage",

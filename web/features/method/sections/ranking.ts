@@ -1,7 +1,8 @@
 /** How the fits are chosen, paragraph by paragraph. Formulas between backquotes. */
 export const RANKING: readonly string[] = [
-  "A fit is one MOSFET with `R_1`, `R_2`, `R_D`, `R_S`, solved for the typical device at 25 °C. Every condition of the brief is a hard limit; the dissipation is held at the brief's highest temperature.",
-  "Among what is left, the least centring error comes first, counted in whole per cent, rounded down, because less is noise; within one per cent the greater symmetric swing. Ties, so that the list never depends on luck: the smaller supply current, then part number, `R_1`, `R_2`, `R_D`, `R_S`. The list shows the best set of each part; a row opens to the part's other sets.",
+  "A fit is one MOSFET with the resistors of the brief's circuit, solved for the typical device at 25 °C. Every condition of the brief is a hard limit; the dissipation is held at the brief's highest temperature.",
+  "Three orders are on offer. Best centred: the least centring error comes first, counted in whole per cent, rounded down, because less is noise; within one per cent the greater assured swing. Most assured swing: the greatest swing that every build inside the spread still has. Least cost: the cheapest transistor and resistors for the whole build, among the fits whose assured swing reaches the brief's swing.",
+  "Ties, so that the list never depends on luck: the smaller supply current, then part number, `R_1`, `R_2`, `R_G`, `R_D`, `R_S`, `R_{S2}`. The list shows the best set of each part; a row opens to the part's other sets.",
   "The result is exact: the same list that testing every combination would give. No sampling, no guess. Combinations are left untested only where a bound proves that they can't be in the list. A search that its time limit ends says so.",
   "A part that has no fit is counted once, by the filter or rating that bars it, or by the furthest condition that any of its combinations reached. Where nothing fits, the product names the one condition that, dropped alone, lets the most parts in, and how near the nearest miss came.",
 ];
