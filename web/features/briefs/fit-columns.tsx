@@ -76,9 +76,9 @@ export function setColumns(context: ColumnsContext): DataTableColumn<Fit>[] {
     },
     {
       id: "assured",
-      header: "assured swing",
+      header: <span className="inline-block w-14">assured swing</span>,
+      name: "Assured swing",
       numeric: true,
-      className: "min-w-20",
       sortValue: (fit) => fit.assured.symmetric,
       cell: (fit) => <AssuredSwing volts={fit.assured.symmetric} />,
     },
