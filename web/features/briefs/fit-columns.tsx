@@ -210,7 +210,7 @@ export function fitColumns(context: ColumnsContext): DataTableColumn<Fit>[] {
         <span className="block">
           <span className="block font-semibold leading-5">{part.partNumber}</span>
           <span className="block text-quiet text-xs">
-            {part.maker} · {part.package}
+            {part.maker} · <span className="whitespace-nowrap">{part.package}</span>
           </span>
         </span>
       ),
