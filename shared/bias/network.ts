@@ -68,7 +68,10 @@ export function lineToEdge(network: Network, vds: number, overdrive: number): { 
   return { vds: vds + share * (vds - overdrive), slope: slope + share * (slope - degeneration) };
 }
 
-/** The transition point and the room each way of a saturated Q-point, volts peak at the output. */
+/**
+ * The transition point and the room each way of a saturated Q-point, volts peak at the output; below zero where more
+ * of the input passes around the device than through it.
+ */
 export function roomOf(
   device: SquareLaw,
   network: Network,
@@ -125,17 +128,16 @@ export type SolvedNetwork = Pick<
 export function solveNetwork(device: SquareLaw, network: Network): SolvedNetwork {
   const q = solveQPoint(device, network);
   const room = q.region === "saturation" ? roomOf(device, network, q) : null;
-  const swing = room && {
-    towardCutoff: room.towardCutoff,
-    towardOhmic: room.towardOhmic,
-    symmetric: Math.min(room.towardCutoff, room.towardOhmic),
-  };
+  const towardCutoff = Math.max(0, room?.towardCutoff ?? 0);
+  const towardOhmic = Math.max(0, room?.towardOhmic ?? 0);
+  const swing = room && { towardCutoff, towardOhmic, symmetric: Math.min(towardCutoff, towardOhmic) };
   return {
     ...q,
     overdrive: q.vgs - device.vt,
     transition: room ? room.transition : null,
     swing,
-    centringError: swing && centringErrorOf(swing),
+    // Without room on one side a stage is as far off centre as can be, whatever it has on the other.
+    centringError: swing && (swing.symmetric > 0 ? centringErrorOf(swing) : 1),
     ...smallSignalOf(device, network, q),
     power: q.vds * q.id,
   };

@@ -147,12 +147,11 @@ export function describeStage(part: Part, brief: Brief, resistors: Resistors, ce
 }
 
 function capacitorsFor(brief: Brief, { values, bias }: StageFigures): Capacitors {
-  const resistances = circuitOf(values.circuit).capacitorResistances(values, {
+  const stage = {
     gm: bias.gm,
     gds: bias.ro === null ? 0 : 1 / bias.ro,
-    inputResistance: bias.inputResistance,
-    outputResistance: bias.outputResistance,
+    ...circuitOf(values.circuit).couplingNodes(values),
     sourceImpedance: brief.source.ohms,
-  });
-  return smallestCapacitors(resistances, brief.lowCorner.hertz);
+  };
+  return smallestCapacitors(stage, brief.lowCorner.hertz);
 }

@@ -1,56 +1,91 @@
 import { spawnSync } from "node:child_process";
-import type { Device, StageValues } from "#shared/schemas/bias";
+import { mkdtempSync, readFileSync, rmSync } from "node:fs";
+import { tmpdir } from "node:os";
+import { join } from "node:path";
 
 /** A simulation that takes longer than this is stuck. */
 const TIME_LIMIT_MS = 20_000;
 
+/** The values of each vector of one analysis, point by point; complex values by their magnitude. */
+export type Vectors = { points: number; of: (name: string) => number[] };
+
 /**
- * Operating points of stages, solved by ngspice (Debian) with its level-1 model: an independent solver of the same
- * device law. KP is 2K at W = L, junction leakage and gmin are made negligible, P-channel stages are drawn mirrored.
+ * Runs ngspice (Debian) on a circuit: an independent solver of the same device law. Junction leakage and gmin are
+ * made negligible, and tolerances tight.
  *
- * @returns drain current and drain-source voltage as magnitudes, in the order asked
- * @throws Error with ngspice's own words when it fails
+ * @param elements the netlist's lines, without title and end
+ * @param analyses commands such as `op` or `ac dec 20 1 1e6`, run one after the other on the same circuit
+ * @param save the vectors to keep, such as `v(d1)`
+ * @returns the vectors of each analysis, in the order asked
+ * @throws Error with ngspice's own words when it fails or takes too long
  */
-export function simulateOperatingPoints(
-  cases: readonly { device: Device; stage: StageValues }[],
-): { id: number; vds: number }[] {
-  const lines = ["* operating points"];
-  const prints: string[] = [];
-  cases.forEach(({ device, stage }, n) => {
-    const sign = device.polarity === "n" ? 1 : -1;
-    const source = stage.rs > 0 ? `s${n}` : "0";
-    lines.push(
-      `vdd${n} vdd${n} 0 ${sign * stage.vdd}`,
-      `r1${n} vdd${n} g${n} ${stage.r1}`,
-      `r2${n} g${n} 0 ${stage.r2}`,
-      `rd${n} vdd${n} d${n} ${stage.rd}`,
-      ...(stage.rs > 0 ? [`rs${n} s${n} 0 ${stage.rs}`] : []),
-      `m${n} d${n} g${n} ${source} ${source} model${n} w=1u l=1u`,
-      `.model model${n} ${device.polarity}mos level=1 vto=${sign * device.vt} kp=${2 * device.k} lambda=${device.lambda} is=1e-30`,
-    );
-    const drain = `v(d${n})${stage.rs > 0 ? `-v(s${n})` : ""}`;
-    prints.push(`let i${n} = (v(vdd${n})-v(d${n}))/${stage.rd}`, `let u${n} = ${drain}`, `print i${n} u${n}`);
-  });
-  lines.push(
-    ".options gmin=1e-18 reltol=1e-8 abstol=1e-16 vntol=1e-9 numdgt=10",
-    ".control",
-    "set numdgt=10",
-    "op",
-    ...prints,
-    ".endc",
-    ".end",
-  );
-  const run = spawnSync("ngspice", ["-b"], {
-    input: `${lines.join("\n")}\n`,
-    encoding: "utf8",
-    timeout: TIME_LIMIT_MS,
-  });
-  if (run.error) throw run.error;
-  return cases.map((_, n) => ({ id: read(run.stdout, `i${n}`), vds: read(run.stdout, `u${n}`) }));
+export function runNgspice(
+  elements: readonly string[],
+  analyses: readonly string[],
+  save: readonly string[],
+): Vectors[] {
+  const folder = mkdtempSync(join(tmpdir(), "evenswing-ngspice-"));
+  try {
+    const netlist = [
+      "* stages",
+      ...elements,
+      ".options gmin=1e-18 reltol=1e-8 abstol=1e-12 vntol=1e-9 itl1=1000 itl2=1000",
+      ".control",
+      "set filetype=ascii",
+      ...save.map((vector) => `save ${vector}`),
+      ...analyses.flatMap((analysis, n) => [analysis, `write ${n}.raw`]),
+      ".endc",
+      ".end",
+    ];
+    const run = spawnSync("ngspice", ["-b"], {
+      cwd: folder,
+      input: `${netlist.join("\n")}\n`,
+      encoding: "utf8",
+      timeout: TIME_LIMIT_MS,
+      maxBuffer: 1 << 26,
+    });
+    if (run.error) throw run.error;
+    return analyses.map((analysis, n) => {
+      try {
+        return parseRaw(readFileSync(join(folder, `${n}.raw`), "latin1"));
+      } catch (cause) {
+        const words = `${run.stdout.slice(-1000)}\n${run.stderr.slice(-2000)}`;
+        throw new Error(`ngspice gave no "${analysis}":\n${words}`, { cause });
+      }
+    });
+  } finally {
+    rmSync(folder, { recursive: true, force: true });
+  }
 }
 
-function read(output: string, name: string): number {
-  const found = output.split("\n").find((line) => line.startsWith(`${name} = `));
-  if (!found) throw new Error(`ngspice printed no ${name}:\n${output.slice(-2000)}`);
-  return Math.abs(Number(found.slice(name.length + 3)));
+/** Reads ngspice's ASCII raw file: a head, the names of the vectors, then each point's values one a line. */
+function parseRaw(text: string): Vectors {
+  const points = Number(/^No\. Points:\s*(\d+)/m.exec(text)?.[1]);
+  const head = text.indexOf("\nVariables:");
+  const body = text.indexOf("\nValues:");
+  const names = text
+    .slice(head, body)
+    .split("\n")
+    .slice(2)
+    .map((line) => line.trim().split(/\s+/)[1])
+    .filter((name) => name !== undefined);
+  const tokens = text
+    .slice(body + "\nValues:".length)
+    .split(/\s+/)
+    .filter((token) => token !== "");
+  const stride = names.length + 1;
+  if (!(points > 0) || tokens.length !== points * stride) throw new Error("Not a whole raw file");
+  return {
+    points,
+    of: (name) => {
+      const at = names.indexOf(name.toLowerCase());
+      if (at < 0) throw new Error(`ngspice kept no ${name}`);
+      return Array.from({ length: points }, (_, point) => magnitude(tokens[point * stride + 1 + at]));
+    },
+  };
+}
+
+function magnitude(token: string): number {
+  const [re, im] = token.split(",").map(Number);
+  return im === undefined ? re : Math.hypot(re, im);
 }

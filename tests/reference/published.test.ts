@@ -1,6 +1,8 @@
 import { describe, expect, it } from "vitest";
+import { circuitOf } from "#shared/bias/circuits/registry";
 import { drainCurrent, thresholdAt } from "#shared/bias/device";
 import { millerCapacitances, millerPoles } from "#shared/bias/high-corner";
+import { smallSignalOf } from "#shared/bias/network";
 import { solveStage } from "#shared/bias/solve-stage";
 import { transitionPoint } from "#shared/bias/swing";
 import type { Bias, Device, StageValues } from "#shared/schemas/bias";
@@ -59,6 +61,50 @@ describe("worked examples with published inputs", () => {
       const expected = result[key];
       if (expected !== undefined) expect(relative(bias[key], expected as number)).toBeLessThan(1e-3);
     }
+  });
+
+  // A feedback resistor large enough to carry no signal, where the example names none.
+  const LARGE = 100e6;
+  const otherCircuits = cases.flatMap((entry) => {
+    const { circuit } = entry as { circuit?: string };
+    const { vss, ...stage } = entry.stage ?? {};
+    if (circuit === "gate-at-ground") {
+      return [{ ...entry, stage: { ...stage, circuit: "negative-rail" as const, vss: -vss, rg: LARGE } }];
+    }
+    return circuit === "drain-feedback" ? [{ ...entry, stage: { rg: LARGE, ...stage, circuit } }] : [];
+  });
+
+  it("hold both a negative rail and drain feedback", () => {
+    const circuits = otherCircuits.map(({ stage }) => stage.circuit);
+    expect(circuits.filter((circuit) => circuit === "negative-rail")).toHaveLength(1);
+    expect(circuits.filter((circuit) => circuit === "drain-feedback")).toHaveLength(3);
+  });
+
+  it.each(otherCircuits)("$id: $source", ({ device, stage, result }) => {
+    const bias = solveStage(device, buildStageValues(stage));
+    expect(bias.region).toBe(result.region);
+    for (const key of ["id", "vds", "gm"] as const) {
+      const expected = result[key];
+      if (expected !== undefined) expect(relative(bias[key], expected as number)).toBeLessThan(1e-3);
+    }
+  });
+
+  it("drain-feedback-15v: gain and input resistance with an ro of 50 V over the current", () => {
+    const found = otherCircuits.find(({ id }) => id === "drain-feedback-15v");
+    if (!found) throw new Error("No published case drain-feedback-15v");
+    const { device, result } = found;
+    const stage = buildStageValues(found.stage);
+    const { region, id, vds, vgs } = solveStage(device, stage);
+    const circuit = circuitOf(stage.circuit);
+    // The source leaves ro out at d.c. and takes 50 V/ID for it: the λ that gives that ro here, and the K that keeps
+    // the current.
+    const lambda = 1 / (50 - vds);
+    const modulated = { vt: device.vt, k: device.k / (1 + lambda * vds), lambda };
+    const { gain, gds } = smallSignalOf(modulated, circuit.network(stage), { region, id, vds, vgs });
+    const expected = result as { ro: number; gain: number; inputResistance: number };
+    expect(relative(1 / gds, expected.ro)).toBeLessThan(1e-3);
+    expect(relative(gain, expected.gain)).toBeLessThan(1e-3);
+    expect(relative(circuit.inputResistance(stage, gain), expected.inputResistance)).toBeLessThan(1e-3);
   });
 
   it("divider-10v-centred has 3.000 V toward cutoff and 2.630 V toward the ohmic region", () => {

@@ -2,7 +2,6 @@ import type { Network } from "#shared/bias/network";
 import type { StageValues } from "#shared/schemas/bias";
 import type { Brief } from "#shared/schemas/brief";
 import type { ResistorKey, Resistors } from "#shared/schemas/circuit";
-import type { CapacitorResistances } from "../low-corner";
 
 /** Voltages of the device's terminals against ground, V (magnitudes from the common rail). */
 export type NodeVoltages = { gate: number; source: number; drain: number };
@@ -22,6 +21,16 @@ export type SignalNodes = {
   feedback: number | null;
   /** The terminal that the output is taken from. */
   output: "drain" | "source";
+};
+
+/** What the coupling and bypass capacitors stand among, ohms. */
+export type CouplingNodes = Pick<SignalNodes, "gate" | "feedback" | "output"> & {
+  /** From drain to signal ground without the load; 0 where the drain is at signal ground. */
+  drain: number;
+  /** Behind the output capacitor; null without a load, which needs no coupling. */
+  load: number | null;
+  /** From source to signal ground: what stays in the signal's way, and below it what is bypassed (0 for none). */
+  source: { signal: number; bypassed: number };
 };
 
 /** What may lie anywhere in its range from build to build, beside the threshold. */
@@ -57,11 +66,7 @@ export type Circuit = {
   /** What the output shows its load, ohms, the load itself left out. */
   outputResistance: (stage: StageValues, device: Conductances) => number;
   signalNodes: (stage: StageValues) => SignalNodes;
-  /** What each capacitor works against, ohms. */
-  capacitorResistances: (
-    stage: StageValues,
-    device: Conductances & { inputResistance: number; outputResistance: number; sourceImpedance: number },
-  ) => CapacitorResistances;
+  couplingNodes: (stage: StageValues) => CouplingNodes;
   /** Where the least room toward cutoff and toward the ohmic region can lie; the proofs stand in the circuit's file. */
   worst: { cutoff: WorstEnds; ohmic: WorstEnds };
 };

@@ -1,4 +1,3 @@
-import { resistanceAtSource } from "#shared/bias/low-corner";
 import { parallel } from "#shared/bias/swing";
 import type { StageValues } from "#shared/schemas/bias";
 import type { Circuit } from "../circuit";
@@ -12,6 +11,9 @@ const shareOf = ({ rg, r2 }: StageValues) => (r2 === 0 ? 1 : r2 / (rg + r2));
 const loadedShareOf = ({ rg, r2, rd }: StageValues) => (r2 === 0 ? 1 : (rg + r2) / (rg + r2 + rd));
 
 const drainVoltage = (stage: StageValues, id: number) => loadedShareOf(stage) * (stage.vdd - id * stage.rd);
+
+/** From the gate to ground: nothing without R2. */
+const gateResistanceOf = ({ r2 }: StageValues) => (r2 === 0 ? Number.POSITIVE_INFINITY : r2);
 
 /** The a.c. load at the drain: RD, RL, and RG, whose other end the source holds. */
 const loadOf = ({ rd, rl, rg }: StageValues) => 1 / (1 / parallel(rd, rl) + 1 / rg);
@@ -65,17 +67,17 @@ export const DRAIN_FEEDBACK: Circuit = {
   signalNodes: (stage) => ({
     drain: parallel(stage.rd, stage.rl),
     source: degenerationOf(stage),
-    gate: stage.r2 === 0 ? Number.POSITIVE_INFINITY : stage.r2,
+    gate: gateResistanceOf(stage),
     feedback: stage.rg,
     output: "drain",
   }),
-  capacitorResistances: (stage, { gm, gds, inputResistance, outputResistance, sourceImpedance }) => ({
-    input: sourceImpedance + inputResistance,
-    output: stage.rl === null ? null : outputResistance + stage.rl,
-    bypass:
-      stage.sourceBypassed && stage.rs > 0
-        ? { rs: stage.rs, seen: resistanceAtSource(gm, gds, loadOf(stage), stage.rs) }
-        : null,
+  couplingNodes: (stage) => ({
+    drain: stage.rd,
+    load: stage.rl,
+    source: { signal: degenerationOf(stage), bypassed: stage.sourceBypassed ? stage.rs : 0 },
+    gate: gateResistanceOf(stage),
+    feedback: stage.rg,
+    output: "drain",
   }),
   worst: {
     cutoff: { fixed: { k: -1 }, either: ["rail", "r2", "rg", "rd", "rs"] },

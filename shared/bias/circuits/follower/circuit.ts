@@ -44,10 +44,13 @@ export const FOLLOWER: Circuit = {
     feedback: null,
     output: "source",
   }),
-  capacitorResistances: ({ rl }, { inputResistance, outputResistance, sourceImpedance }) => ({
-    input: sourceImpedance + inputResistance,
-    output: rl === null ? null : outputResistance + rl,
-    bypass: null,
+  couplingNodes: ({ r1, r2, rs, rl }) => ({
+    drain: 0,
+    load: rl,
+    source: { signal: rs, bypassed: 0 },
+    gate: parallel(r1, r2),
+    feedback: null,
+    output: "source",
   }),
   worst: {
     cutoff: { fixed: { rail: -1, k: -1, r1: 1, r2: -1 }, either: ["rs"] },

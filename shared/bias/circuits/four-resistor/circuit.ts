@@ -1,5 +1,4 @@
 import { dividerVoltage } from "#shared/bias/divider";
-import { resistanceAtSource } from "#shared/bias/low-corner";
 import { parallel } from "#shared/bias/swing";
 import type { StageValues } from "#shared/schemas/bias";
 import type { Circuit } from "../circuit";
@@ -68,13 +67,13 @@ export const FOUR_RESISTOR: Circuit = {
     feedback: null,
     output: "drain",
   }),
-  capacitorResistances: (stage, { gm, gds, inputResistance, outputResistance, sourceImpedance }) => ({
-    input: sourceImpedance + inputResistance,
-    output: stage.rl === null ? null : outputResistance + stage.rl,
-    bypass:
-      stage.sourceBypassed && stage.rs > 0
-        ? { rs: stage.rs, seen: resistanceAtSource(gm, gds, parallel(stage.rd, stage.rl), stage.rs) }
-        : null,
+  couplingNodes: (stage) => ({
+    drain: stage.rd,
+    load: stage.rl,
+    source: { signal: degenerationOf(stage), bypassed: stage.sourceBypassed ? stage.rs : 0 },
+    gate: parallel(stage.r1, stage.r2),
+    feedback: null,
+    output: "drain",
   }),
   worst: {
     cutoff: { fixed: { rail: -1, k: -1, r1: 1, r2: -1, rs: 1 }, either: ["rd"] },

@@ -1,4 +1,3 @@
-import { resistanceAtSource } from "#shared/bias/low-corner";
 import { parallel } from "#shared/bias/swing";
 import type { StageValues } from "#shared/schemas/bias";
 import type { Circuit } from "../circuit";
@@ -47,12 +46,13 @@ export const NEGATIVE_RAIL: Circuit = {
     feedback: null,
     output: "drain",
   }),
-  capacitorResistances: (stage, { gm, gds, inputResistance, outputResistance, sourceImpedance }) => ({
-    input: sourceImpedance + inputResistance,
-    output: stage.rl === null ? null : outputResistance + stage.rl,
-    bypass: stage.sourceBypassed
-      ? { rs: stage.rs, seen: resistanceAtSource(gm, gds, parallel(stage.rd, stage.rl), stage.rs) }
-      : null,
+  couplingNodes: (stage) => ({
+    drain: stage.rd,
+    load: stage.rl,
+    source: { signal: degenerationOf(stage), bypassed: stage.sourceBypassed ? stage.rs : 0 },
+    gate: stage.rg,
+    feedback: null,
+    output: "drain",
   }),
   worst: {
     cutoff: { fixed: { rail: -1, negativeRail: -1, k: -1, rs: 1 }, either: ["rd"] },

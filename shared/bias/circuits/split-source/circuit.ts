@@ -1,5 +1,4 @@
 import { dividerVoltage } from "#shared/bias/divider";
-import { resistanceAtSource } from "#shared/bias/low-corner";
 import { parallel } from "#shared/bias/swing";
 import type { Circuit } from "../circuit";
 
@@ -52,13 +51,13 @@ export const SPLIT_SOURCE: Circuit = {
     feedback: null,
     output: "drain",
   }),
-  capacitorResistances: (
-    { rd, rs, rs2, rl },
-    { gm, gds, inputResistance, outputResistance, sourceImpedance },
-  ) => ({
-    input: sourceImpedance + inputResistance,
-    output: rl === null ? null : outputResistance + rl,
-    bypass: { rs: rs2, seen: resistanceAtSource(gm, gds, parallel(rd, rl), rs2, rs) },
+  couplingNodes: ({ r1, r2, rd, rs, rs2, rl }) => ({
+    drain: rd,
+    load: rl,
+    source: { signal: rs, bypassed: rs2 },
+    gate: parallel(r1, r2),
+    feedback: null,
+    output: "drain",
   }),
   worst: {
     cutoff: { fixed: { rail: -1, k: -1, r1: 1, r2: -1, rs: 1, rs2: 1 }, either: ["rd"] },
