@@ -1,14 +1,10 @@
-import type { Line, LineCircuit } from "#shared/bias/circuits/line";
 import { conductionAt, kelvin, thresholdAt } from "#shared/bias/device";
 import { findRoot } from "#shared/bias/find-root";
 import { saturationCurrent, saturationOverdrive } from "#shared/bias/saturation";
 import { transitionVoltage } from "#shared/bias/swing";
-import type { Problem } from "../problem";
+import { emptyLine, type Line, type Lines, type Triple } from "./lines";
 import type { PartSpread } from "./part-spread";
-import { emptyLine, type LineEnd, type SpreadEnds } from "./spread-ends";
-
-/** A line as its resistors, ohms; axes that a circuit doesn't have are 0. */
-export type Triple = readonly [number, number, number];
+import type { LineEnd, SpreadEnds } from "./spread-ends";
 
 const KELVIN_25 = kelvin(25);
 
@@ -23,9 +19,7 @@ const KELVIN_25 = kelvin(25);
  */
 export class AssuredSwing {
   readonly #ends: SpreadEnds;
-  readonly #circuit: LineCircuit;
-  readonly #load: number;
-  readonly #bypassed: boolean;
+  readonly #lines: Lines;
   /** What tolerance does to R1/R2 at most: (1 + t)/(1 - t); 1 where the gate has no divider. */
   readonly #ratioSpread: number;
   readonly #line: Line = emptyLine();
@@ -33,18 +27,14 @@ export class AssuredSwing {
   low = 0;
   high = 0;
 
-  constructor(problem: Problem, circuit: LineCircuit, ends: SpreadEnds) {
-    const { resistorTolerance } = problem;
+  constructor(lines: Lines, ends: SpreadEnds, ratioSpread: number) {
     this.#ends = ends;
-    this.#circuit = circuit;
-    this.#load = problem.load ?? Number.POSITIVE_INFINITY;
-    this.#bypassed = problem.bypassed;
-    this.#ratioSpread = circuit.gate.length === 2 ? (1 + resistorTolerance) / (1 - resistorTolerance) : 1;
+    this.#lines = lines;
+    this.#ratioSpread = ratioSpread;
   }
 
-  #fill({ scale }: LineEnd, [a, b, c]: Triple): Line {
-    this.#circuit.fill(this.#line, this.#load, this.#bypassed, a * scale[0], b * scale[1], c * scale[2]);
-    return this.#line;
+  #fill({ scale }: LineEnd, triple: Triple): Line {
+    return this.#lines.fill(this.#line, triple[0] * scale[0], triple[1] * scale[1], triple[2] * scale[2]);
   }
 
   /**

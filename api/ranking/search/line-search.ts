@@ -4,9 +4,9 @@ import { saturationCurrent, saturationOverdrive } from "#shared/bias/saturation"
 import { transitionVoltage } from "#shared/bias/swing";
 import type { Catalog } from "../catalog";
 import type { Problem } from "../problem";
-import { AssuredSwing, type Triple } from "./assured";
+import { AssuredSwing } from "./assured";
 import { impossibleIn } from "./bounds";
-import { type Box, Boxes, type Demand } from "./boxes";
+import { Boxes, type Demand } from "./boxes";
 import {
   CONDITIONS,
   type Condition,
@@ -18,10 +18,12 @@ import {
   readDevice,
   type SearchLine,
 } from "./conditions";
-import { type Best, bucketOf, nanovolts, rankOf } from "./order";
+import { emptyLine, Lines, type Triple } from "./lines";
+import { type Best, bucketOf, nanovolts, PartBest, rankOf } from "./order";
+import { greatestAssuredSwing } from "./part-bound";
 import { type PartSpread, partSpread } from "./part-spread";
 import { filterRatioTable, firstAtMost, firstBelow, leastResistance, type RatioTable } from "./ratio-table";
-import { emptyLine, spreadEnds } from "./spread-ends";
+import { spreadEnds } from "./spread-ends";
 import {
   currentAtCentring,
   currentForOhmicRoom,
@@ -34,6 +36,10 @@ import {
 const SLACK = 1e-9;
 /** How often a span is halved to cut away what can't meet a condition: 32 slices. */
 const HALVINGS = 5;
+/** How much sooner a box is cut in the first resistor where its ratios are narrowed without cutting. */
+const CONTRACTED = 1000;
+/** Ratios closer than this are told apart by the first resistor. */
+const FINE = 1.03;
 /** The least assured swing that shows in the order: half a nanovolt. */
 const LEAST_LEVEL = 0.5e-9;
 
@@ -61,7 +67,7 @@ const NO_SPREAD: PartSpread = {
  */
 export class LineSearch {
   readonly #problem: Problem;
-  readonly #circuit: LineCircuit;
+  readonly #lines: Lines;
   /** Every ratio the values allow, to tell a missing value from a pair that is barred. */
   readonly #every: RatioTable;
   readonly #table: RatioTable;
@@ -69,6 +75,8 @@ export class LineSearch {
   readonly #supply: number;
   readonly #gateSupply: number;
   readonly #values: readonly (readonly number[])[];
+  /** The least current that any divider draws, A. */
+  readonly #leastDivider: number;
   readonly #boxes: Boxes;
   readonly #assured: AssuredSwing;
   readonly #pointwise: boolean;
@@ -85,6 +93,10 @@ export class LineSearch {
   readonly #demand: Demand = { centring: 1, level: 0, supply: Number.POSITIVE_INFINITY };
   /** The supply current to beat where the list has nothing assured to beat; null where it has. */
   #tie: number | null = null;
+  /** No line of the part has more assured swing than this, V. */
+  #greatestSwing = 0;
+  /** Whether only what is dead centre and assured is looked for as long as nothing is found. */
+  #floor = false;
   /** Where the last slice of the present line ended: widened slices may touch, and no ratio is to be met twice. */
   #walkedTo = 0;
   /** The line where the last part had its best fit, as indices: the next is likely to have it near. */
@@ -100,12 +112,13 @@ export class LineSearch {
     const name = problem.circuit as LineCircuitName;
     const { vdd, vss, inputResistanceMin, resistorPower, values } = problem;
     this.#problem = problem;
-    this.#circuit = LINE_CIRCUITS[name];
+    const circuit: LineCircuit = LINE_CIRCUITS[name];
+    this.#lines = new Lines(problem, circuit);
     this.#shouldStop = shouldStop;
     this.#every = every;
     this.#supply = vdd + vss;
     this.#gateSupply = vss > 0 ? vss : vdd;
-    const divides = this.#circuit.gate.length === 2;
+    const divides = circuit.gate.length === 2;
     this.#table = filterRatioTable(every, (r1, r2) => {
       if (!divides) return r2 >= inputResistanceMin;
       const vg = vdd / (1 + r1 / r2);
@@ -117,16 +130,21 @@ export class LineSearch {
     });
     this.#leastInput = leastResistance(this.#table);
     this.#values = [0, 1, 2].map((axis) => {
-      const key = this.#circuit.axes[axis];
+      const key = circuit.axes[axis];
       return key ? values[key] : [0];
     });
-    const ends = spreadEnds(problem, name, this.#circuit);
+    const { resistorTolerance } = problem;
+    const ratioSpread = divides ? (1 + resistorTolerance) / (1 - resistorTolerance) : 1;
+    const ends = spreadEnds(problem, name, circuit);
     const [greatest] = values.r1.slice(-1);
-    this.#boxes = new Boxes(problem, this.#circuit, this.#values, ends, {
-      leastDivider: divides ? vdd / (2 * greatest) : 0,
+    this.#leastDivider = divides ? vdd / (2 * greatest) : 0;
+    this.#boxes = new Boxes(problem, this.#lines, this.#values[0], ends, {
+      leastDivider: this.#leastDivider,
       leastInput: this.#leastInput,
+      table: this.#table,
+      ratioSpread,
     });
-    this.#assured = new AssuredSwing(problem, this.#circuit, ends);
+    this.#assured = new AssuredSwing(this.#lines, ends, ratioSpread);
     this.#pointwise = hasPointConditions(problem);
   }
 
@@ -145,10 +163,28 @@ export class LineSearch {
     this.#spread = partSpread(catalog, row, this.#problem);
     const [a, b, c] = this.#values;
     if (a.length * b.length * c.length === 0 || this.#every.ratios.length === 0) return "resistor-values";
+    this.#greatestSwing = greatestAssuredSwing(this.#problem, this.#spread);
+    // One of many parts is first looked through for something dead centre and assured, as its best mostly is.
+    this.#floor = best instanceof PartBest;
+    if (this.#floor) this.#searchAll(best);
+    if (!this.#floor || best.threshold === null) {
+      this.#floor = false;
+      this.#searchAll(best);
+    }
+    return this.#stopped ? null : CONDITIONS[this.#furthest];
+  }
+
+  #searchAll(best: Best): void {
+    const [a, b, c] = this.#values;
     this.#hinted = this.#hint;
     if (this.#hinted) this.#searchLine(...this.#hinted, best);
-    this.#searchBox([0, a.length - 1, 0, b.length - 1, 0, c.length - 1], best);
-    return this.#stopped ? null : CONDITIONS[this.#furthest];
+    if (this.#lookAt(best).level > this.#greatestSwing) return;
+    const last = a.length - 1;
+    const over = 1 + SLACK;
+    // Where a resistor isn't there, its ratio is 0 and the range has to hold that.
+    const bHigh = b[0] > 0 ? (b[b.length - 1] / a[0]) * over : 1;
+    const cHigh = c[0] > 0 ? (c[c.length - 1] / a[0]) * over : 1;
+    this.#searchBox(0, last, b[0] / a[last], bHigh, c[0] / a[last], cHigh, best);
   }
 
   #fail(condition: Condition): void {
@@ -164,6 +200,10 @@ export class LineSearch {
     demand.level = objective === "cost" ? swingPeak : 0;
     demand.supply = Number.POSITIVE_INFINITY;
     this.#tie = null;
+    if (!threshold && this.#floor) {
+      demand.centring = objective === "centred" ? 0.01 : 1;
+      demand.level = Math.max(demand.level, LEAST_LEVEL);
+    }
     if (!threshold || objective === "cost") return demand;
     const { major, minor, supply } = threshold;
     if (objective === "centred" && major < 99) demand.centring = (major + 1) / 100;
@@ -174,47 +214,119 @@ export class LineSearch {
     return demand;
   }
 
-  #mightHold(box: Box, best: Best): boolean {
+  #mightHold(
+    from: number,
+    to: number,
+    bLow: number,
+    bHigh: number,
+    cLow: number,
+    cHigh: number,
+    best: Best,
+  ): boolean {
     const demand = this.#lookAt(best);
-    if (this.#tie === null) return this.#boxes.mightHold(this.#device, this.#spread, box, demand);
-    demand.level = LEAST_LEVEL;
-    if (this.#boxes.mightHold(this.#device, this.#spread, box, demand)) return true;
-    demand.level = 0;
-    demand.supply = this.#tie;
-    return this.#boxes.mightHold(this.#device, this.#spread, box, demand);
+    const boxes = this.#boxes;
+    if (this.#tie !== null) {
+      demand.level = LEAST_LEVEL;
+      if (boxes.mightHold(this.#device, this.#spread, from, to, bLow, bHigh, cLow, cHigh, demand))
+        return true;
+      demand.level = 0;
+      demand.supply = this.#tie;
+    }
+    if (boxes.mightHold(this.#device, this.#spread, from, to, bLow, bHigh, cLow, cHigh, demand)) return true;
+    if (boxes.failed) this.#fail(boxes.failed);
+    return false;
   }
 
-  /** All lines of a box, halved until it can be left out or is a single line. */
-  #searchBox(box: Box, best: Best): void {
+  /**
+   * All lines whose first resistor lies in a run of values and whose others have ratios to it in given ranges, the
+   * upper ends left out; halved until it can be left out or holds a single line.
+   */
+  #searchBox(
+    from: number,
+    to: number,
+    bLow: number,
+    bHigh: number,
+    cLow: number,
+    cHigh: number,
+    best: Best,
+  ): void {
     this.#stopped ||= this.#shouldStop();
     if (this.#stopped) return;
-    const [a0, a1, b0, b1, c0, c1] = box;
-    if (a0 === a1 && b0 === b1 && c0 === c1) {
-      const hinted = this.#hinted;
-      if (hinted && hinted[0] === a0 && hinted[1] === b0 && hinted[2] === c0) return;
-      this.#searchLine(a0, b0, c0, best);
-      return;
-    }
-    if (!this.#mightHold(box, best)) {
-      if (this.#boxes.failed) this.#fail(this.#boxes.failed);
-      return;
-    }
     const [a, b, c] = this.#values;
-    const widthA = a[a1] / a[a0] || 1;
-    const widthB = b[b1] / b[b0] || 1;
-    const widthC = c[c1] / c[c0] || 1;
-    if (widthA >= widthB && widthA >= widthC) {
-      const middle = (a0 + a1) >> 1;
-      this.#searchBox([middle + 1, a1, b0, b1, c0, c1], best);
-      this.#searchBox([a0, middle, b0, b1, c0, c1], best);
-    } else if (widthB >= widthC) {
-      const middle = (b0 + b1) >> 1;
-      this.#searchBox([a0, a1, b0, middle, c0, c1], best);
-      this.#searchBox([a0, a1, middle + 1, b1, c0, c1], best);
+    const demand = this.#lookAt(best);
+    let [b0, b1, c0, c1] = [bLow, bHigh, cLow, cHigh];
+    const contracts = demand.level > 0 && this.#tie === null;
+    if (contracts) {
+      const { range } = this.#boxes;
+      const { gateB, gateC } = this.#lines;
+      range[0] = gateB * b0 + gateC * c0;
+      range[1] = gateB * b1 + gateC * c1;
+      if (!this.#boxes.contract(this.#device, this.#spread, from, to, b0, b1, demand)) return;
+      if (gateB === 1) {
+        b0 = Math.max(b0, range[0] - gateC * c1);
+        b1 = Math.min(b1, range[1] - gateC * c0);
+      }
+      if (gateC === 1) {
+        c0 = Math.max(c0, range[0] - b1);
+        c1 = Math.min(c1, range[1] - b0);
+      }
+    }
+    if ((!contracts || this.#boxes.hasConditions) && !this.#mightHold(from, to, b0, b1, c0, c1, best)) return;
+    if (from === to) {
+      this.#searchRow(from, b0, b1, c0, c1, best);
+      return;
+    }
+    const bWidth = b[0] > 0 ? b1 / b0 : 1;
+    const cWidth = c[0] > 0 ? c1 / c0 : 1;
+    const width = (contracts ? CONTRACTED : 1) * (a[to] / a[from]);
+    if (width > Math.max(bWidth, cWidth) || Math.max(bWidth, cWidth) < FINE) {
+      const middle = (from + to) >> 1;
+      // First the half where the last best was.
+      if (this.#hint && this.#hint[0] <= middle) {
+        this.#searchBox(from, middle, b0, b1, c0, c1, best);
+        this.#searchBox(middle + 1, to, b0, b1, c0, c1, best);
+      } else {
+        this.#searchBox(middle + 1, to, b0, b1, c0, c1, best);
+        this.#searchBox(from, middle, b0, b1, c0, c1, best);
+      }
+    } else if (bWidth >= cWidth) {
+      const middle = Math.sqrt(b0 * b1);
+      this.#searchBox(from, to, b0, middle, c0, c1, best);
+      this.#searchBox(from, to, middle, b1, c0, c1, best);
     } else {
-      const middle = (c0 + c1) >> 1;
-      this.#searchBox([a0, a1, b0, b1, c0, middle], best);
-      this.#searchBox([a0, a1, b0, b1, middle + 1, c1], best);
+      const middle = Math.sqrt(c0 * c1);
+      this.#searchBox(from, to, b0, b1, c0, middle, best);
+      this.#searchBox(from, to, b0, b1, middle, c1, best);
+    }
+  }
+
+  /** The lines of one value of the first resistor: halved by ratio while there are several. */
+  #searchRow(at: number, bLow: number, bHigh: number, cLow: number, cHigh: number, best: Best): void {
+    const [a, b, c] = this.#values;
+    const bFrom = firstRatioAtLeast(b, a[at], bLow);
+    const bTo = firstRatioAtLeast(b, a[at], bHigh);
+    const cFrom = firstRatioAtLeast(c, a[at], cLow);
+    const cTo = firstRatioAtLeast(c, a[at], cHigh);
+    const bCount = bTo - bFrom;
+    const cCount = cTo - cFrom;
+    if (bCount <= 0 || cCount <= 0) return;
+    if (bCount === 1 && cCount === 1) {
+      const hinted = this.#hinted;
+      if (hinted && hinted[0] === at && hinted[1] === bFrom && hinted[2] === cFrom) return;
+      // A box of one line is tighter than the one it came in.
+      const bRatio = b[bFrom] / a[at];
+      const cRatio = c[cFrom] / a[at];
+      if (this.#mightHold(at, at, bRatio, bRatio, cRatio, cRatio, best)) {
+        this.#searchLine(at, bFrom, cFrom, best);
+      }
+    } else if (bCount >= cCount) {
+      const middle = b[(bFrom + bTo) >> 1] / a[at];
+      this.#searchBox(at, at, b[bFrom] / a[at], middle, cLow, cHigh, best);
+      this.#searchBox(at, at, middle, bHigh, cLow, cHigh, best);
+    } else {
+      const middle = c[(cFrom + cTo) >> 1] / a[at];
+      this.#searchBox(at, at, bLow, bHigh, c[cFrom] / a[at], middle, best);
+      this.#searchBox(at, at, bLow, bHigh, middle, cHigh, best);
     }
   }
 
@@ -222,8 +334,7 @@ export class LineSearch {
   #searchLine(a: number, b: number, c: number, best: Best): void {
     const line = this.#line;
     const triple: Triple = [this.#values[0][a], this.#values[1][b], this.#values[2][c]];
-    const { load, bypassed } = this.#problem;
-    this.#circuit.fill(this.#filled, load ?? Number.POSITIVE_INFINITY, bypassed, ...triple);
+    this.#lines.fill(this.#filled, triple[0], triple[1], triple[2]);
     line.load = this.#filled.output;
     line.degeneration = this.#filled.degeneration;
     line.slope = this.#filled.slope;
@@ -254,7 +365,7 @@ export class LineSearch {
       this.#fail("swing");
       return null;
     }
-    high = Math.min(high, problem.supplyCurrentMax - this.#boxes.leastDivider);
+    high = Math.min(high, problem.supplyCurrentMax - this.#leastDivider);
     if (low > high * (1 + SLACK)) {
       this.#fail("supply-current");
       return null;
@@ -362,7 +473,7 @@ export class LineSearch {
       low = Math.max(low, this.#firstAtLeast(this.#table, this.#gateAt(line, least) * (1 - SLACK)));
     }
     if (this.#tie !== null && !this.#assured.window(this.#spread, this.#triple, LEAST_LEVEL)) {
-      most = Math.min(most, this.#tie - this.#boxes.leastDivider);
+      most = Math.min(most, this.#tie - this.#leastDivider);
       if (!(most > 0)) return [low, low];
     }
     if (most < Number.POSITIVE_INFINITY) {
@@ -418,7 +529,7 @@ export class LineSearch {
   #offerPairs(line: SearchLine, at: number, point: Point, bucket: number, assured: number, best: Best): void {
     const problem = this.#problem;
     const { offsets, r1, r2 } = this.#table;
-    const [a, b, c] = this.#triple;
+    const { major, minor } = rankOf(problem.objective, bucket, assured, 0);
     for (let pair = offsets[at]; pair < offsets[at + 1]; pair++) {
       const supply = point.id + (r1[pair] > 0 ? problem.vdd / (r1[pair] + r2[pair]) : 0);
       // Later pairs draw more still.
@@ -431,16 +542,29 @@ export class LineSearch {
         continue;
       }
       const taken = best.add({
-        ...rankOf(problem.objective, bucket, assured, 0),
+        major,
+        minor,
         supply,
         row: this.#device.row,
         first: r1[pair],
         second: r2[pair],
-        a,
-        b,
-        c,
+        a: this.#triple[0],
+        b: this.#triple[1],
+        c: this.#triple[2],
       });
       if (!taken) return;
     }
   }
+}
+
+/** Index of the first value whose ratio to another is not below a given one, in a rising list. */
+function firstRatioAtLeast(values: readonly number[], to: number, ratio: number): number {
+  let low = 0;
+  let high = values.length;
+  while (low < high) {
+    const middle = (low + high) >>> 1;
+    if (values[middle] / to < ratio) low = middle + 1;
+    else high = middle;
+  }
+  return low;
 }

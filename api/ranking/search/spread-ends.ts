@@ -1,4 +1,4 @@
-import type { Line, LineCircuit } from "#shared/bias/circuits/line";
+import type { LineCircuit } from "#shared/bias/circuits/line";
 import { circuitOf } from "#shared/bias/circuits/registry";
 import type { CircuitName } from "#shared/schemas/circuit";
 import type { Problem } from "../problem";
@@ -17,7 +17,7 @@ export type LineEnd = {
 };
 
 /** The corners of a problem's box that can hold the least room, by side; VT and K come with each part. */
-export type SpreadEnds = { cutoff: LineEnd[]; ohmic: LineEnd[]; ohmicEitherK: boolean };
+export type SpreadEnds = { cutoff: LineEnd[]; ohmic: LineEnd[] };
 
 /** Turns what a circuit has proved about its worst builds into corners of a problem. */
 export function spreadEnds(problem: Problem, name: CircuitName, { axes }: LineCircuit): SpreadEnds {
@@ -43,14 +43,5 @@ export function spreadEnds(problem: Problem, name: CircuitName, { axes }: LineCi
       };
     });
   };
-  return {
-    cutoff: side(worst.cutoff),
-    ohmic: side(worst.ohmic),
-    ohmicEitherK: worst.ohmic.either.includes("k"),
-  };
-}
-
-/** An empty line to fill. */
-export function emptyLine(): Line {
-  return { gateSlope: 0, total: 0, slope: 0, output: 0, degeneration: 0 };
+  return { cutoff: side(worst.cutoff), ohmic: side(worst.ohmic) };
 }

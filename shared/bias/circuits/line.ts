@@ -1,33 +1,24 @@
 import type { ResistorKey } from "#shared/schemas/circuit";
 
-/** What the resistors around the device, without those at the gate, make of a stage, ohms; see `Network`. */
-export type Line = {
-  gateSlope: number;
-  total: number;
-  slope: number;
-  output: number;
-  degeneration: number;
-};
+/** For each resistor of a line whether it counts, 1, or not, 0. */
+export type Counts = readonly [0 | 1, 0 | 1, 0 | 1];
 
 /**
- * A circuit whose gate voltage depends on nothing but the resistors at the gate: its search walks the gate voltages
- * of each line. Every figure of a line only rises with each of its resistors.
+ * A circuit whose gate voltage depends on nothing but the resistors at the gate, so that its search can walk the gate
+ * voltages of each line of resistors around the device. As plain coefficients, because the search lives on them. The
+ * first resistor of a line stands where the output is, so that the a.c. load is that resistor beside the load.
  */
 export type LineCircuit = {
-  /** The resistors of a line, in the order in which `fill` takes them. */
+  /** The resistors of a line; at most three. */
   axes: readonly ResistorKey[];
   /** The resistors at the gate: two that divide the rail, or one that only ties the gate to ground. */
   gate: readonly ["r1", "r2"] | readonly ["rg"];
-  /**
-   * Works out a line; hot code, so it fills a record at hand.
-   *
-   * @param load the stage's load, ohms; Infinity without one
-   * @param bypassed whether signals pass the source resistor by, where the circuit leaves that open
-   */
-  fill: (into: Line, load: number, bypassed: boolean, a: number, b: number, c: number) => void;
+  /** Which resistors the gate-source voltage loses ID times. */
+  gateSlope: Counts;
+  /** Which resistors the drain-source voltage loses ID times. */
+  total: Counts;
+  /** Where the output is taken from. From the source, all of it is fed back and the drain stands still. */
+  output: "drain" | "source";
+  /** Which resistors feed signal back into the gate-source voltage, the output itself apart. */
+  degeneration: (bypassed: boolean) => Counts;
 };
-
-/** Two resistances in parallel where the second may be infinite. */
-export function beside(resistance: number, load: number): number {
-  return load === Number.POSITIVE_INFINITY ? resistance : (resistance * load) / (resistance + load);
-}

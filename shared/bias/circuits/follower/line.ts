@@ -1,14 +1,10 @@
-import { beside, type LineCircuit } from "../line";
+import type { LineCircuit } from "../line";
 
 export const FOLLOWER_LINE: LineCircuit = {
   axes: ["rs"],
   gate: ["r1", "r2"],
-  fill: (into, load, _bypassed, rs) => {
-    const output = beside(rs, load);
-    into.gateSlope = rs;
-    into.total = rs;
-    into.slope = output;
-    into.output = output;
-    into.degeneration = output;
-  },
+  gateSlope: [1, 0, 0],
+  total: [1, 0, 0],
+  output: "source",
+  degeneration: () => [0, 0, 0],
 };

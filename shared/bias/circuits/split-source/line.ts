@@ -1,13 +1,10 @@
-import { beside, type LineCircuit } from "../line";
+import type { LineCircuit } from "../line";
 
 export const SPLIT_SOURCE_LINE: LineCircuit = {
   axes: ["rd", "rs", "rs2"],
   gate: ["r1", "r2"],
-  fill: (into, load, _bypassed, rd, rs, rs2) => {
-    into.gateSlope = rs + rs2;
-    into.total = rd + rs + rs2;
-    into.output = beside(rd, load);
-    into.degeneration = rs;
-    into.slope = into.output + rs;
-  },
+  gateSlope: [0, 1, 1],
+  total: [1, 1, 1],
+  output: "drain",
+  degeneration: () => [0, 1, 0],
 };
