@@ -1,4 +1,5 @@
 import type { Part } from "#shared/schemas/part";
+import { partLineCents } from "./cost";
 
 /**
  * The figures of many parts as columns, in memory that every worker thread reads without a copy.
@@ -22,6 +23,8 @@ export type Catalog = {
   cgs: Float64Array;
   cgd: Float64Array;
   cds: Float64Array;
+  /** Integer cents for the transistors of a build; NaN without a price. */
+  cents: Float64Array;
 };
 
 const COLUMNS = [
@@ -41,6 +44,7 @@ const COLUMNS = [
   "cgs",
   "cgd",
   "cds",
+  "cents",
 ] as const;
 
 /** Compares part numbers by code unit, then ids: the order of the ranking's ties. */
@@ -49,8 +53,13 @@ export function compareParts(a: Part, b: Part): number {
   return a.id - b.id;
 }
 
-/** Lays parts out as columns. The parts must already stand in rank order. */
-export function buildCatalog(parts: readonly Part[]): Catalog {
+/**
+ * Lays parts out as columns.
+ *
+ * @param parts in rank order already
+ * @param buildQuantity what they are priced for
+ */
+export function buildCatalog(parts: readonly Part[], buildQuantity: number): Catalog {
   const columns = Object.fromEntries(
     COLUMNS.map((name) => [name, new Float64Array(new SharedArrayBuffer(8 * parts.length))]),
   ) as Record<(typeof COLUMNS)[number], Float64Array>;
@@ -71,6 +80,7 @@ export function buildCatalog(parts: readonly Part[]): Catalog {
     columns.cgs[row] = part.ciss - part.crss;
     columns.cgd[row] = part.crss;
     columns.cds[row] = part.coss - part.crss;
+    columns.cents[row] = partLineCents(part, buildQuantity) ?? Number.NaN;
   });
   return { size: parts.length, ...columns };
 }

@@ -4,6 +4,7 @@ import type { Brief } from "#shared/schemas/brief";
 import { type CircuitName, RESISTOR_KEYS, type ResistorKey, resistorsOf } from "#shared/schemas/circuit";
 import type { Objective } from "#shared/schemas/fits";
 import { valuesBetween } from "#shared/values/e-series";
+import type { ResistorPrices } from "./cost";
 
 /** What can be bought at the brief's resistor tolerance, and how much power the largest size takes. */
 export type ResistorSupply = {
@@ -11,6 +12,8 @@ export type ResistorSupply = {
   rating: number;
   /** Resistances in stock, ohms; null where stock is no condition. */
   stocked: ReadonlySet<number> | null;
+  /** What resistors cost at the brief's build quantity. */
+  prices: ResistorPrices;
 };
 
 /** A brief as the search wants it: plain numbers (a limit that isn't stated is 0 or Infinity) and lists of values. */
@@ -43,7 +46,9 @@ export type Problem = {
   deratingPower: number;
   /** What each resistor may dissipate, W, derating applied. */
   resistorPower: number;
-  buildQuantity: number;
+  resistorDerating: number;
+  /** What resistors cost; empty unless the objective is the cost. */
+  prices: ResistorPrices;
 };
 
 /** Turns a checked brief into the search's numbers. */
@@ -84,7 +89,8 @@ export function compileProblem(brief: Brief, objective: Objective, supply: Resis
     deratingVds: brief.derating.vds,
     deratingPower: brief.derating.power,
     resistorPower: brief.derating.resistorPower * supply.rating,
-    buildQuantity: brief.buildQuantity,
+    resistorDerating: brief.derating.resistorPower,
+    prices: objective === "cost" ? supply.prices : new Map(),
   };
 }
 

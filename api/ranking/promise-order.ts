@@ -1,4 +1,5 @@
 import type { Part } from "#shared/schemas/part";
+import { partLineCents } from "./cost";
 import type { Problem } from "./problem";
 
 /**
@@ -8,7 +9,13 @@ import type { Problem } from "./problem";
  *
  * @returns rows of the parts
  */
-export function promiseOrder(problem: Problem, parts: readonly Part[]): Int32Array {
+export function promiseOrder(problem: Problem, parts: readonly Part[], buildQuantity: number): Int32Array {
+  if (problem.objective === "cost") {
+    const cents = parts.map((part) => partLineCents(part, buildQuantity) ?? Number.POSITIVE_INFINITY);
+    return Int32Array.from(parts.keys()).sort((a, b) =>
+      cents[a] < cents[b] ? -1 : cents[a] > cents[b] ? 1 : 0,
+    );
+  }
   const supply = problem.vdd + problem.vss;
   const { rd, rs } = problem.values;
   const values = rd.length > 0 ? rd : rs;

@@ -1,9 +1,11 @@
+import { circuitOf } from "#shared/bias/circuits/registry";
 import { assuredSwing, boxOf } from "#shared/bias/spread";
 import { figureSignal, figureStage } from "#shared/bias/stage-sheet";
 import { cautionsFor } from "#shared/cautions";
 import type { Brief } from "#shared/schemas/brief";
 import type { Fit, FitsRequest, FitsResponse } from "#shared/schemas/fits";
 import type { Part } from "#shared/schemas/part";
+import { costOfBuild } from "./cost";
 import { unitPriceAt } from "./filters";
 import type { ResistorSupply } from "./problem";
 import { type RankingControl, rankParts } from "./rank-parts";
@@ -38,7 +40,7 @@ export async function rankFits(
       : null;
   return {
     fits: ranking.candidates.map((candidate) =>
-      presentFit(ranking.parts[candidate.row], request.brief, candidate),
+      presentFit(ranking.parts[candidate.row], request.brief, supply, candidate),
     ),
     considered: ranking.considered,
     partsThatFit: ranking.partsThatFit,
@@ -51,9 +53,10 @@ export async function rankFits(
   };
 }
 
-function presentFit(part: Part, brief: Brief, candidate: Candidate): Fit {
+function presentFit(part: Part, brief: Brief, supply: ResistorSupply, candidate: Candidate): Fit {
   const resistors = resistorsOfCandidate(brief.circuit, candidate);
   const figures = figureStage(part, brief, resistors);
+  const volts = circuitOf(brief.circuit).resistorVoltages(figures.values, figures.bias.id);
   return {
     part: {
       id: part.id,
@@ -71,7 +74,7 @@ function presentFit(part: Part, brief: Brief, candidate: Candidate): Fit {
     supplyCurrent: figures.supplyCurrent,
     ...figureSignal(part, brief, figures),
     assured: assuredSwing(boxOf(part, brief, figures.values)).swing,
-    cost: null,
+    cost: costOfBuild(part, brief, supply.prices, resistors, volts)?.cents ?? null,
     cautions: cautionsFor(part, brief, resistors),
   };
 }

@@ -64,8 +64,8 @@ export async function rankParts(
     for (const _ of eligible) count("resistor-values");
     return { parts: eligible, candidates: [], considered, partsThatFit: 0, complete: true, passedOver };
   }
-  const search = startSearch(problem, eligible, control);
-  const order = promiseOrder(problem, eligible);
+  const search = startSearch(problem, eligible, request.brief.buildQuantity, control);
+  const order = promiseOrder(problem, eligible, request.brief.buildQuantity);
   const best = await search.run("each", request.limit, null, order);
   for (const reason of best.passedOver) count(reason);
   const ranking = { parts: eligible, considered, partsThatFit: best.partsThatFit, passedOver };
@@ -85,12 +85,12 @@ type Pass = Pick<RankingOutcome, "candidates" | "partsThatFit"> & {
 };
 
 /** Prepares a search whose passes share one catalog in memory and one way to call them off. */
-function startSearch(problem: Problem, parts: Part[], control: RankingControl) {
+function startSearch(problem: Problem, parts: Part[], buildQuantity: number, control: RankingControl) {
   const threads = control.threads ?? THREADS;
   const shared = {
     searchId: randomUUID(),
     problem,
-    catalog: buildCatalog(parts),
+    catalog: buildCatalog(parts, buildQuantity),
     cancelled: new Int32Array(new SharedArrayBuffer(4)),
     deadline: control.deadline,
   };

@@ -34,6 +34,8 @@ const WORDS: Record<PassedOverReason, (brief: Brief) => string> = {
   "high-corner": (brief) => `The high corner stays below ${quantity(brief.highCorner.min, "Hz")}.`,
   distortion: (brief) =>
     `The second harmonic stays above ${formatPercent(brief.distortion.max ?? 0, 2)} at the stated output peak.`,
+  "no-price": (brief) =>
+    `The part, or a resistor it needs, isn't sold at ${formatPercent(brief.resistors.tolerance, 1)} in a size that stands its power and voltage.`,
 };
 
 function gainWords({ gain }: Brief): string {

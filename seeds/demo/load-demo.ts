@@ -68,7 +68,7 @@ async function insertStory(
   const briefId = await insertBrief(db, teamId, { name: story.name, brief, userId, now: next() });
   if (!story.stage) return;
   const parts = await selectAllParts(db, teamId);
-  const supply = { rating: LARGEST_RATING, stocked: null };
+  const supply = { rating: LARGEST_RATING, stocked: null, prices: new Map() };
   const { fits } = await rankFits(
     { brief, objective: "centred", distinct: "part", limit: 5000 },
     parts,

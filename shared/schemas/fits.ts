@@ -33,6 +33,7 @@ export const PASSED_OVER_REASONS = [
   "input-resistance",
   "high-corner",
   "distortion",
+  "no-price",
 ] as const;
 
 export const fitPartSchema = partSchema

@@ -7,7 +7,7 @@ import { drawProblem, plainBrief, SUPPLY } from "./problems";
 
 /** Random small problems of each circuit. */
 const PROBLEMS = Number(process.env.EVENSWING_PROBLEMS ?? 50);
-const OBJECTIVES = ["centred", "assured"] as const;
+const OBJECTIVES = ["centred", "assured", "cost"] as const;
 const CIRCUITS = ["four-resistor", "split-source", "follower", "negative-rail"] as const;
 
 afterAll(closePool);
@@ -32,6 +32,7 @@ describe.each(CIRCUITS)("the ranking of the %s circuit equals trying every combi
       );
       expect(all.partsThatFit).toBe(new Set(expected.map((fit) => fit.partId)).size);
       all.fits.slice(0, 20).forEach((fit, n) => {
+        if (objective === "cost") expect(fit.cost).toBe(expected[n].cents);
         expect(Math.abs(fit.assured.symmetric - expected[n].nanovolts * 1e-9)).toBeLessThan(2e-9);
       });
 

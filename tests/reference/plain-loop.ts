@@ -32,6 +32,7 @@ export type PlainPart = {
   vdss: number;
   pd25: number;
   tjMax: number;
+  priceBreaks: { quantity: number; unitPrice: number }[];
 };
 
 export type PlainResistor = "r1" | "r2" | "rg" | "rd" | "rs" | "rs2";

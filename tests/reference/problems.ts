@@ -9,7 +9,29 @@ import type { PlainBrief, PlainResistor } from "./plain-loop";
 const MOST_COMBINATIONS = 6000;
 const RATING = 1;
 
-export const SUPPLY = { rating: RATING, stocked: null };
+/** Sizes of each value, in ohms: small, middle and large, at prices that differ from value to value; a few have none. */
+function sizesOf(ohms: number) {
+  const digits = Number(
+    ohms
+      .toPrecision(2)
+      .replace(/[^1-9]/g, "")
+      .slice(0, 2),
+  );
+  if (digits % 11 === 0) return [];
+  return [
+    { power: 0.0625, voltage: 25, lineCents: 20 + (digits % 3) },
+    { power: 0.125, voltage: 75, lineCents: 22 + (digits % 4) },
+    { power: 1, voltage: 250, lineCents: 40 },
+  ];
+}
+
+const PRICED = (["E3", "E6", "E12", "E24"] as const).flatMap((series) => valuesBetween(series, 10, 10e6));
+
+export const SUPPLY = {
+  rating: RATING,
+  stocked: null,
+  prices: new Map(PRICED.map((ohms) => [ohms, sizesOf(ohms)])),
+};
 
 /** The range of the brief that each resistor takes its values from. */
 const RANGES: Record<PlainResistor, "divider" | "drain" | "source"> = {
@@ -129,5 +151,17 @@ export function plainBrief(brief: Brief, objective: PlainBrief["objective"]): Pl
     deratingVds: brief.derating.vds,
     deratingPower: brief.derating.power,
     resistorPower: brief.derating.resistorPower * RATING,
+    partCents: ({ priceBreaks }) => {
+      const reached = priceBreaks.filter(({ quantity }) => quantity <= brief.buildQuantity);
+      const last = reached[reached.length - 1];
+      return last ? last.unitPrice * brief.buildQuantity : null;
+    },
+    resistorCents: (ohms, watts, volts) => {
+      const share = brief.derating.resistorPower;
+      for (const size of sizesOf(ohms)) {
+        if (watts <= share * size.power && volts <= share * size.voltage) return size.lineCents;
+      }
+      return null;
+    },
   };
 }

@@ -60,6 +60,10 @@ export function randomParts(random: Random, count: number): Part[] {
       coss: significant(crss * random.between(1.5, 4)),
       vdss: random.pick([20, 30, 60, 100]),
       pd25: significant(random.between(0.1, 1)),
+      priceBreaks: [
+        { quantity: 1, unitPrice: random.whole(20, 60) },
+        { quantity: 100, unitPrice: random.whole(8, 15) },
+      ],
     });
   });
 }

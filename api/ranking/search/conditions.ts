@@ -26,6 +26,7 @@ export const CONDITIONS = [
   "input-resistance",
   "high-corner",
   "distortion",
+  "no-price",
 ] as const satisfies readonly PassedOverReason[];
 
 export type Condition = (typeof CONDITIONS)[number];

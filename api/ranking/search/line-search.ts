@@ -22,6 +22,7 @@ import { emptyLine, Lines, type Triple } from "./lines";
 import { type Best, bucketOf, nanovolts, PartBest, rankOf } from "./order";
 import { greatestAssuredSwing } from "./part-bound";
 import { type PartSpread, partSpread } from "./part-spread";
+import { Prices } from "./prices";
 import { filterRatioTable, firstAtMost, firstBelow, leastResistance, type RatioTable } from "./ratio-table";
 import { spreadEnds } from "./spread-ends";
 import {
@@ -79,6 +80,7 @@ export class LineSearch {
   readonly #leastDivider: number;
   readonly #boxes: Boxes;
   readonly #assured: AssuredSwing;
+  readonly #prices: Prices;
   readonly #pointwise: boolean;
   readonly #shouldStop: () => boolean;
   readonly #filled = emptyLine();
@@ -145,6 +147,7 @@ export class LineSearch {
       ratioSpread,
     });
     this.#assured = new AssuredSwing(this.#lines, ends, ratioSpread);
+    this.#prices = new Prices(problem, circuit);
     this.#pointwise = hasPointConditions(problem);
   }
 
@@ -163,9 +166,10 @@ export class LineSearch {
     this.#spread = partSpread(catalog, row, this.#problem);
     const [a, b, c] = this.#values;
     if (a.length * b.length * c.length === 0 || this.#every.ratios.length === 0) return "resistor-values";
+    if (!this.#prices.startPart(catalog.cents[row])) return "no-price";
     this.#greatestSwing = greatestAssuredSwing(this.#problem, this.#spread);
     // One of many parts is first looked through for something dead centre and assured, as its best mostly is.
-    this.#floor = best instanceof PartBest;
+    this.#floor = best instanceof PartBest && this.#problem.objective !== "cost";
     if (this.#floor) this.#searchAll(best);
     if (!this.#floor || best.threshold === null) {
       this.#floor = false;
@@ -204,8 +208,13 @@ export class LineSearch {
       demand.centring = objective === "centred" ? 0.01 : 1;
       demand.level = Math.max(demand.level, LEAST_LEVEL);
     }
-    if (!threshold || objective === "cost") return demand;
+    if (!threshold) return demand;
     const { major, minor, supply } = threshold;
+    if (objective === "cost") {
+      if (this.#prices.least > major) demand.supply = 0;
+      else if (this.#prices.least === major) demand.supply = supply;
+      return demand;
+    }
     if (objective === "centred" && major < 99) demand.centring = (major + 1) / 100;
     const reached = objective === "assured" ? -major : major === 0 ? -minor : -1;
     if (reached > 0) demand.level = (reached - 1) * 1e-9;
@@ -271,7 +280,8 @@ export class LineSearch {
         c1 = Math.min(c1, range[1] - b0);
       }
     }
-    if ((!contracts || this.#boxes.hasConditions) && !this.#mightHold(from, to, b0, b1, c0, c1, best)) return;
+    const conditions = this.#boxes.hasConditions || this.#problem.objective === "cost";
+    if ((!contracts || conditions) && !this.#mightHold(from, to, b0, b1, c0, c1, best)) return;
     if (from === to) {
       this.#searchRow(from, b0, b1, c0, c1, best);
       return;
@@ -430,7 +440,9 @@ export class LineSearch {
     }
     this.#walkedTo = to;
     const centre = currentAtCentring(this.#supply, this.#device.k, this.#device.lambda, line, 0);
-    this.#visit(line, from, to, this.#firstAtLeast(this.#table, this.#gateAt(line, centre)), best);
+    const likeliest = this.#firstAtLeast(this.#table, this.#gateAt(line, centre));
+    // The least cost is mostly shared, and then the smallest current comes first.
+    this.#visit(line, from, to, this.#problem.objective === "cost" ? from : likeliest, best);
   }
 
   /** Index of the first ratio whose gate voltage is not below the given one. */
@@ -465,11 +477,12 @@ export class LineSearch {
     const { ratios } = this.#table;
     let low = from;
     let high = to;
-    let most = Number.POSITIVE_INFINITY;
+    let most = demand.supply - this.#leastDivider;
+    if (!(most > 0)) return [low, low];
     if (demand.centring < 1) {
       const c = demand.centring;
       const least = currentAtCentring(this.#supply, k, lambda, line, -c) * (1 - SLACK);
-      most = currentAtCentring(this.#supply, k, lambda, line, c) * (1 + SLACK);
+      most = Math.min(most, currentAtCentring(this.#supply, k, lambda, line, c) * (1 + SLACK));
       low = Math.max(low, this.#firstAtLeast(this.#table, this.#gateAt(line, least) * (1 - SLACK)));
     }
     if (this.#tie !== null && !this.#assured.window(this.#spread, this.#triple, LEAST_LEVEL)) {
@@ -529,7 +542,12 @@ export class LineSearch {
   #offerPairs(line: SearchLine, at: number, point: Point, bucket: number, assured: number, best: Best): void {
     const problem = this.#problem;
     const { offsets, r1, r2 } = this.#table;
-    const { major, minor } = rankOf(problem.objective, bucket, assured, 0);
+    const byCost = problem.objective === "cost";
+    const lineCents = byCost ? this.#prices.lineCents(this.#triple, point.id) : 0;
+    if (lineCents === null) {
+      this.#fail("no-price");
+      return;
+    }
     for (let pair = offsets[at]; pair < offsets[at + 1]; pair++) {
       const supply = point.id + (r1[pair] > 0 ? problem.vdd / (r1[pair] + r2[pair]) : 0);
       // Later pairs draw more still.
@@ -541,6 +559,12 @@ export class LineSearch {
         this.#fail("high-corner");
         continue;
       }
+      const gateCents = byCost ? this.#prices.gateCents(r1[pair], r2[pair]) : 0;
+      if (gateCents === null) {
+        this.#fail("no-price");
+        continue;
+      }
+      const { major, minor } = rankOf(problem.objective, bucket, assured, lineCents + gateCents);
       const taken = best.add({
         major,
         minor,
@@ -552,7 +576,8 @@ export class LineSearch {
         b: this.#triple[1],
         c: this.#triple[2],
       });
-      if (!taken) return;
+      // Pairs that draw more may still cost less.
+      if (!taken && !byCost) return;
     }
   }
 }
