@@ -5,6 +5,7 @@ import { type Database, openDatabase } from "../api/db/client";
 import { capacitorOrderables, resistorOrderables } from "../api/db/schema/orderables";
 import { parts } from "../api/db/schema/parts";
 import { readEnvironment } from "../api/env";
+import { catalogChanged } from "../api/features/catalog/service";
 import { closePool } from "../api/ranking/pool";
 import { readCapacitors, readMosfets, readResistors } from "./catalog/read";
 import { loadDemo } from "./demo/load-demo";
@@ -33,6 +34,7 @@ async function fillWhenEmpty<T extends MySqlTable>(
     for (let at = 0; at < rows.length; at += ROWS_A_STATEMENT) {
       await transaction.insert(table).values(rows.slice(at, at + ROWS_A_STATEMENT));
     }
+    await catalogChanged(transaction, null);
   });
 }
 

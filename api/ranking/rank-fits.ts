@@ -16,6 +16,9 @@ import type { Candidate } from "./search/order";
 
 /** How long a search may take unless told otherwise, ms. */
 const TIME_LIMIT_MS = 60_000;
+/** How many fits are shown while a search goes on, and how often. */
+const FIRST_ROWS = 25;
+const MS_BETWEEN_SHOWINGS = 250;
 
 /**
  * Answers a request for fits: the exact ranking, dressed with every fit's figures and cautions; where nothing fits,
@@ -23,25 +26,35 @@ const TIME_LIMIT_MS = 60_000;
  *
  * @param parts the parts the team may use
  * @param supply what resistors can be bought
+ * @param onFits told the first rows now and then; they may still change
  * @throws the signal's reason when called off
  */
 export async function rankFits(
   request: FitsRequest,
   parts: readonly Part[],
   supply: ResistorSupply,
-  control: Partial<RankingControl> = {},
+  { onFits, ...control }: Partial<RankingControl> & { onFits?: (fits: Fit[]) => void } = {},
 ): Promise<FitsResponse> {
   const started = performance.now();
-  const timed = { ...control, deadline: control.deadline ?? Date.now() + TIME_LIMIT_MS };
+  const present = (candidates: Candidate[], among: readonly Part[]) =>
+    candidates.map((candidate) => presentFit(among[candidate.row], request.brief, supply, candidate));
+  let shownAt = started;
+  const timed = {
+    ...control,
+    deadline: control.deadline ?? Date.now() + TIME_LIMIT_MS,
+    onCandidates: (candidates: Candidate[], among: readonly Part[]) => {
+      if (!onFits || performance.now() - shownAt < MS_BETWEEN_SHOWINGS) return;
+      onFits(present(candidates.slice(0, FIRST_ROWS), among));
+      shownAt = performance.now();
+    },
+  };
   const ranking = await rankParts(request, parts, supply, timed);
   const relax =
     ranking.candidates.length === 0 && ranking.complete
       ? await findRelaxation(request, parts, supply, timed)
       : null;
   return {
-    fits: ranking.candidates.map((candidate) =>
-      presentFit(ranking.parts[candidate.row], request.brief, supply, candidate),
-    ),
+    fits: present(ranking.candidates, ranking.parts),
     considered: ranking.considered,
     partsThatFit: ranking.partsThatFit,
     complete: ranking.complete,

@@ -122,10 +122,13 @@ describe("the OpenAPI document", () => {
     const { schema } = operationOf({ path: "/bias/solve", method: "post" }).requestBody?.content[
       "application/json"
     ] ?? { schema: {} };
-    type Node = { properties: Record<string, Node>; minimum?: number; maximum?: number };
+    type Node = { properties: Record<string, Node>; anyOf?: object[]; minimum?: number; maximum?: number };
     const { stage } = (schema as Node).properties;
     expect(stage.properties.vdd).toMatchObject({ minimum: 0.5, maximum: 450 });
-    expect(stage.properties.r1).toMatchObject({ minimum: 0.1, maximum: 100e6 });
+    // 0 stands for a resistor that a circuit doesn't have.
+    const [none, some] = stage.properties.r1.anyOf ?? [];
+    expect(none).toMatchObject({ enum: [0] });
+    expect(some).toMatchObject({ minimum: 0.1, maximum: 100e6 });
   });
 });
 

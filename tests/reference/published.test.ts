@@ -65,13 +65,15 @@ describe("worked examples with published inputs", () => {
 
   // A feedback resistor large enough to carry no signal, where the example names none.
   const LARGE = 100e6;
-  const otherCircuits = cases.flatMap((entry) => {
+  const otherCircuits = cases.flatMap((entry): (Omit<Case, "stage"> & { stage: StageValues })[] => {
     const { circuit } = entry as { circuit?: string };
-    const { vss, ...stage } = entry.stage ?? {};
+    const { vss, rg = LARGE, ...stage }: Partial<StageValues> = entry.stage ?? {};
     if (circuit === "gate-at-ground") {
-      return [{ ...entry, stage: { ...stage, circuit: "negative-rail" as const, vss: -vss, rg: LARGE } }];
+      const values = { ...stage, circuit: "negative-rail" as const, vss: Math.abs(vss ?? 0), rg };
+      return [{ ...entry, stage: buildStageValues(values) }];
     }
-    return circuit === "drain-feedback" ? [{ ...entry, stage: { rg: LARGE, ...stage, circuit } }] : [];
+    if (circuit !== "drain-feedback") return [];
+    return [{ ...entry, stage: buildStageValues({ ...stage, circuit: "drain-feedback", rg }) }];
   });
 
   it("hold both a negative rail and drain feedback", () => {
@@ -81,7 +83,7 @@ describe("worked examples with published inputs", () => {
   });
 
   it.each(otherCircuits)("$id: $source", ({ device, stage, result }) => {
-    const bias = solveStage(device, buildStageValues(stage));
+    const bias = solveStage(device, stage);
     expect(bias.region).toBe(result.region);
     for (const key of ["id", "vds", "gm"] as const) {
       const expected = result[key];
@@ -92,8 +94,7 @@ describe("worked examples with published inputs", () => {
   it("drain-feedback-15v: gain and input resistance with an ro of 50 V over the current", () => {
     const found = otherCircuits.find(({ id }) => id === "drain-feedback-15v");
     if (!found) throw new Error("No published case drain-feedback-15v");
-    const { device, result } = found;
-    const stage = buildStageValues(found.stage);
+    const { device, result, stage } = found;
     const { region, id, vds, vgs } = solveStage(device, stage);
     const circuit = circuitOf(stage.circuit);
     // The source leaves ro out at d.c. and takes 50 V/ID for it: the λ that gives that ro here, and the K that keeps

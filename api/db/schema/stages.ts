@@ -1,7 +1,7 @@
 import { index, int, json, mysqlTable, text, varchar } from "drizzle-orm/mysql-core";
 import type { Brief } from "#shared/schemas/brief";
-import type { Part } from "#shared/schemas/part";
 import type { Resistors } from "#shared/schemas/circuit";
+import type { Part } from "#shared/schemas/part";
 import { briefs } from "./briefs";
 import { key, keyOf, moment } from "./columns";
 import { users } from "./identity";

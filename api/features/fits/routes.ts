@@ -12,7 +12,7 @@ export const fitRoutes = [
     access: "design:read",
     tag: "Fits",
     summary:
-      "Rank every part × resistor combination of a brief. With Accept: application/x-ndjson the answer is a line of JSON for each step of progress, then one with the result; closing the connection calls the search off",
+      "Rank every part × resistor combination of a brief. With Accept: application/x-ndjson the answer is a line of JSON for each step of progress, some with the first fits as they stand, then one with the result; closing the connection calls the search off",
     body: fitsRequestSchema,
     response: fitsResponseSchema,
     handle: async (context, { body }, { request, response }) => {
@@ -28,7 +28,11 @@ export const fitRoutes = [
         }
         response.write(`${JSON.stringify(event)}\n`);
       };
-      const result = await findFits(context, body, { signal, onProgress: (progress) => send({ progress }) });
+      const result = await findFits(context, body, {
+        signal,
+        onProgress: (progress) => send({ progress }),
+        onFits: (fits) => send({ fits }),
+      });
       send({ result });
       response.end();
       return undefined;

@@ -2,6 +2,7 @@ import type { Brief } from "#shared/schemas/brief";
 import type { SignedInContext } from "../../http/context";
 import type { ResistorSize } from "../../ranking/cost";
 import type { ResistorSupply } from "../../ranking/problem";
+import { readKept } from "../catalog/service";
 import { type ResistorRow, selectResistors } from "./queries";
 
 /** The size that a resistor is taken to have where the catalog holds none at the tolerance asked for: a 0603, W. */
@@ -10,9 +11,9 @@ const SMALLEST_USUAL_RATING = 0.1;
 const TOLERANCE_SLACK = 1e-9;
 
 /** What resistors a brief can count on: the largest rating at its tolerance, the values in stock, and the prices. */
-export async function resistorSupply({ db }: SignedInContext, brief: Brief): Promise<ResistorSupply> {
+export async function resistorSupply(context: SignedInContext, brief: Brief): Promise<ResistorSupply> {
   const { tolerance, stockedOnly } = brief.resistors;
-  const all = await selectResistors(db);
+  const all = await readKept(context, "resistors", () => selectResistors(context.db));
   const within = all.filter((row) => row.tolerance <= tolerance + TOLERANCE_SLACK);
   const inStock = within.filter(({ stock }) => stock > 0);
   return {

@@ -1,6 +1,7 @@
 import type { ListPartsQuery, Part, PartPage } from "#shared/schemas/part";
 import type { SignedInContext } from "../../http/context";
 import { invalid, notFound } from "../../http/problem";
+import { readKept } from "../catalog/service";
 import { type PartCursor, selectAllParts, selectPart, selectParts } from "./queries";
 
 /** One page of the catalog in part-number order. */
@@ -19,8 +20,8 @@ export async function getPart({ db, actor }: SignedInContext, id: number): Promi
 }
 
 /** Every part the team may use. */
-export function usableParts({ db, actor }: SignedInContext): Promise<Part[]> {
-  return selectAllParts(db, actor.team.id);
+export function usableParts(context: SignedInContext): Promise<Part[]> {
+  return readKept(context, "parts", () => selectAllParts(context.db, context.actor.team.id));
 }
 
 /** A cursor says where the last page ended; opaque to callers. */

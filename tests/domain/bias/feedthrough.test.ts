@@ -6,7 +6,7 @@ import { buildStageValues } from "../../support/build-stage";
 describe("a feedback resistor that passes more than the device takes", () => {
   // By ngspice the output of this stage rises from its lowest input to its highest: it doesn't invert at all.
   const bias = solveStage(
-    { polarity: "p", vt: 1.2, k: 3.77e-3, lambda: 0 },
+    { vt: 1.2, k: 3.77e-3, lambda: 0 },
     buildStageValues({
       circuit: "drain-feedback",
       vdd: 19.8,
