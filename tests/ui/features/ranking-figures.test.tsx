@@ -2,8 +2,9 @@ import { screen, waitFor, within } from "@testing-library/react";
 import { HttpResponse, http } from "msw";
 import { describe, expect, it } from "vitest";
 import type { Fit } from "#shared/schemas/fits";
+import type { FitYieldsRequest } from "#shared/schemas/yield";
 import { NewBriefPage } from "../../../web/features/briefs/new-brief-page";
-import { buildAnswer, buildFit, fill, playRanking, playYields, type YieldsRequest } from "../support/briefs";
+import { buildAnswer, buildFit, fill, playRanking, playYields } from "../support/briefs";
 import { renderAt } from "../support/render";
 import { API, playServer, server, signedInAs } from "../support/server";
 
@@ -152,11 +153,11 @@ describe("the yield of the rows on show", () => {
   it("is a dash while it is waited for, and is called off with its brief", async () => {
     signedInAs("designer");
     playRanking(buildAnswer({ fits: manyFits(25) }));
-    const asked: YieldsRequest[] = [];
+    const asked: FitYieldsRequest[] = [];
     let closed = 0;
     server.use(
       http.post(`${API}/fits/yield`, async ({ request }) => {
-        asked.push((await request.json()) as YieldsRequest);
+        asked.push((await request.json()) as FitYieldsRequest);
         request.signal.addEventListener("abort", () => {
           closed += 1;
         });

@@ -1,9 +1,9 @@
 import { screen } from "@testing-library/react";
 import { HttpResponse, http } from "msw";
 import type { Yield } from "#shared/schemas/bias";
-import { type Brief, briefSchema, type SavedBrief } from "#shared/schemas/brief";
-import type { Resistors } from "#shared/schemas/circuit";
+import { briefSchema, type SavedBrief } from "#shared/schemas/brief";
 import type { Fit, FitsRequest, FitsResponse } from "#shared/schemas/fits";
+import type { FitYieldsRequest } from "#shared/schemas/yield";
 import { buildResistors } from "../../support/build-stage";
 import type { renderAt } from "./render";
 import { API, server } from "./server";
@@ -78,19 +78,12 @@ export function buildAnswer(overrides: Partial<FitsResponse> = {}): FitsResponse
   };
 }
 
-export type YieldsRequest = {
-  brief: Brief;
-  fits: { partId: number; resistors: Resistors }[];
-  builds: number;
-  seed: number;
-};
-
 /** Answers each request for yields with the same one for every fit; keeps what was asked. */
-export function playYields(one: Partial<Yield> = {}): YieldsRequest[] {
-  const asked: YieldsRequest[] = [];
+export function playYields(one: Partial<Yield> = {}): FitYieldsRequest[] {
+  const asked: FitYieldsRequest[] = [];
   server.use(
     http.post(`${API}/fits/yield`, async ({ request }) => {
-      const body = (await request.json()) as YieldsRequest;
+      const body = (await request.json()) as FitYieldsRequest;
       asked.push(body);
       const answer: Yield = { fraction: 0.973, low: 0.9697, high: 0.976, builds: body.builds, ...one };
       return HttpResponse.json({ yields: body.fits.map(() => answer) });

@@ -1,16 +1,14 @@
-import { z } from "zod";
-import { type Yield, yieldSchema } from "#shared/schemas/bias";
+import type { Yield } from "#shared/schemas/bias";
 import type { Brief } from "#shared/schemas/brief";
 import { pickResistors } from "#shared/schemas/circuit";
 import type { Fit } from "#shared/schemas/fits";
+import { type FitYieldsRequest, fitYieldsResponseSchema } from "#shared/schemas/yield";
 import { callApi } from "../../lib/api";
 
 /** Fits in one request: few enough that the first figures come at once. */
 const GROUP_SIZE = 10;
 const BUILDS = 10_000;
 const SEED = 1;
-
-const answerSchema = z.object({ yields: z.array(yieldSchema) });
 
 type Wanted = {
   brief: Brief;
@@ -60,9 +58,9 @@ async function sendGroup(brief: Brief, group: readonly Wanted[]): Promise<void> 
     });
   }
   const fits = group.map(({ fit }) => ({ partId: fit.part.id, resistors: pickResistors(fit) }));
-  const body = { brief, fits, builds: BUILDS, seed: SEED };
+  const body: FitYieldsRequest = { brief, fits, builds: BUILDS, seed: SEED };
   try {
-    const options = { method: "POST", body, schema: answerSchema, signal: call.signal } as const;
+    const options = { method: "POST", body, schema: fitYieldsResponseSchema, signal: call.signal } as const;
     const { yields } = await callApi("/fits/yield", options);
     for (const [index, { resolve }] of group.entries()) resolve(yields[index]);
   } catch (error) {
