@@ -8,7 +8,7 @@ import { drawProblem, plainBrief, SUPPLY } from "./problems";
 /** Random small problems of each circuit. */
 const PROBLEMS = Number(process.env.EVENSWING_PROBLEMS ?? 50);
 const OBJECTIVES = ["centred", "assured", "cost"] as const;
-const CIRCUITS = ["four-resistor", "split-source", "follower", "negative-rail"] as const;
+const CIRCUITS = ["four-resistor", "split-source", "follower", "negative-rail", "drain-feedback"] as const;
 
 afterAll(closePool);
 

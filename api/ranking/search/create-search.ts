@@ -1,8 +1,9 @@
-import { LINE_CIRCUITS, type LineCircuitName } from "#shared/bias/circuits/lines";
+import { LINE_CIRCUITS } from "#shared/bias/circuits/lines";
 import type { CircuitName, Resistors } from "#shared/schemas/circuit";
 import type { Catalog } from "../catalog";
 import type { Problem } from "../problem";
 import type { Condition } from "./conditions";
+import { FeedbackSearch } from "./feedback-search";
 import { LineSearch } from "./line-search";
 import type { Best, Candidate } from "./order";
 import { buildRatioTable, type RatioTable, singleRatioTable } from "./ratio-table";
@@ -20,8 +21,12 @@ export type Search = {
 
 /** The resistors of a candidate by name. */
 export function resistorsOfCandidate(circuit: CircuitName, candidate: Candidate): Resistors {
-  const { gate, axes } = LINE_CIRCUITS[circuit as LineCircuitName];
   const resistors: Resistors = { r1: 0, r2: 0, rg: 0, rd: 0, rs: 0, rs2: 0 };
+  if (circuit === "drain-feedback") {
+    const { first: r2, second: rg, a: rd, b: rs } = candidate;
+    return { ...resistors, r2, rg, rd, rs };
+  }
+  const { gate, axes } = LINE_CIRCUITS[circuit];
   const [last] = gate.slice(-1);
   if (gate.length === 2) resistors.r1 = candidate.first;
   resistors[last] = candidate.second;
@@ -36,7 +41,8 @@ const tables = new Map<string, RatioTable>();
 
 /** Prepares the search of a problem's circuit. */
 export function createSearch(problem: Problem, shouldStop?: () => boolean): Search {
-  const { gate } = LINE_CIRCUITS[problem.circuit as LineCircuitName];
+  if (problem.circuit === "drain-feedback") return new FeedbackSearch(problem, shouldStop);
+  const { gate } = LINE_CIRCUITS[problem.circuit];
   const table = gate.length === 1 ? singleRatioTable(problem.values.rg) : ratioTableOf(problem.values.r1);
   return new LineSearch(problem, table, shouldStop);
 }
