@@ -1,5 +1,7 @@
 import { writeFileSync } from "node:fs";
 
+const NAME_WIDTH = 82;
+
 export type Figure = { name: string; value: number; unit: string };
 export type Bar = { name: string; value: number; bar: number; met: boolean };
 
@@ -10,7 +12,7 @@ export class Report {
 
   figure(name: string, value: number, unit: string): void {
     this.figures.push({ name, value, unit });
-    process.stdout.write(`  ${name.padEnd(62)} ${format(value)} ${unit}\n`);
+    process.stdout.write(`  ${name.padEnd(NAME_WIDTH)} ${format(value)} ${unit}\n`);
   }
 
   /** A ratio with the least (or, with `below`, the greatest) value it is held to. */
@@ -18,7 +20,14 @@ export class Report {
     const met = sense === "above" ? value >= bar : value < bar;
     this.bars.push({ name, value, bar, met });
     const verdict = met ? "met" : "NOT met";
-    process.stdout.write(`  ${name.padEnd(62)} ${format(value)} (${sense} ${format(bar)}: ${verdict})\n`);
+    process.stdout.write(
+      `  ${name.padEnd(NAME_WIDTH)} ${format(value)} (${sense} ${format(bar)}: ${verdict})\n`,
+    );
+  }
+
+  /** A sentence about the figures before it. */
+  note(text: string): void {
+    process.stdout.write(`  ${text}\n`);
   }
 
   heading(text: string): void {
