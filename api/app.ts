@@ -11,6 +11,7 @@ import { fitRoutes } from "./features/fits/routes";
 import { identityRoutes } from "./features/identity/routes";
 import { partRoutes } from "./features/parts/routes";
 import { stageRoutes } from "./features/stages/routes";
+import { yieldRoutes } from "./features/yields/routes";
 import type { Surroundings } from "./http/context";
 import { answerProblems, mountRoutes, refuseUnknownRoute } from "./http/mount";
 import { refuseForeignOrigin } from "./http/origin";
@@ -28,6 +29,7 @@ export const routes: readonly Route[] = [
   ...fitRoutes,
   ...briefRoutes,
   ...stageRoutes,
+  ...yieldRoutes,
 ];
 
 const MOST_REQUESTS_A_MINUTE = 1200;

@@ -7,6 +7,7 @@ import { refuseDemoSecrets } from "./features/identity/demo";
 import { Backoff } from "./http/backoff";
 import { createSessions } from "./http/session";
 import { closePool, startPool } from "./ranking/pool";
+import { closeSimulation } from "./simulation/pool";
 
 const HOST = "127.0.0.1";
 const WEB_FOLDER = "dist/web";
@@ -42,7 +43,7 @@ async function shutDown() {
   const patience = setTimeout(() => server.closeAllConnections(), 3000);
   await new Promise((done) => server.once("close", done));
   clearTimeout(patience);
-  await closePool();
+  await Promise.all([closePool(), closeSimulation()]);
   await close();
 }
 process.once("SIGINT", shutDown);

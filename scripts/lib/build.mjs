@@ -11,7 +11,12 @@ const stampFile = join(root, "dist", "sources.json");
 const parts = {
   server: {
     sources: ["api", "shared", "package-lock.json", "package.json", "scripts/lib/build.mjs"],
-    results: ["dist/server/main.js", "dist/server/ranking/worker.js", "dist/server/db/migrate.js"],
+    results: [
+      "dist/server/main.js",
+      "dist/server/ranking/worker.js",
+      "dist/server/simulation/worker.js",
+      "dist/server/db/migrate.js",
+    ],
     build: buildServer,
   },
   web: {
@@ -54,6 +59,7 @@ async function buildServer() {
   const args = [
     "main=api/main.ts",
     "ranking/worker=api/ranking/worker.ts",
+    "simulation/worker=api/simulation/worker.ts",
     "db/migrate=api/db/migrate.ts",
     "--bundle",
     "--outdir=dist/server",

@@ -19,11 +19,14 @@ export type Box = {
   ambient: { min: number; max: number };
 };
 
+/** A box with the typical device at its heart. */
+export type BuildBox = Box & { device: Pick<DeviceSpread, "vtTyp" | "kTyp"> };
+
 /** The room that every build of a box has, with the builds that set it. */
 export type Assured = { swing: Swing; worst: { cutoff: Build; ohmic: Build } };
 
 /** The box that a brief, a part and a stage make. */
-export function boxOf(part: Part, brief: Brief, stage: StageValues): Box {
+export function boxOf(part: Part, brief: Brief, stage: StageValues): BuildBox {
   return {
     device: part,
     stage,
@@ -37,12 +40,14 @@ export function boxOf(part: Part, brief: Brief, stage: StageValues): Box {
  * build leaves saturation or does not conduct.
  *
  * Which corners can hold the least is each circuit's to prove (`worst` in its file). Temperature moves VT and K
- * together and is no such corner. Toward cutoff, U falls with ID, and ID is stationary where VT' + x' = 0 with
- * x = √(ID/K): as K goes with T^-1.5, where the overdrive x is (4/3) |tcVt| T. What gate voltage a given U takes is a
- * concave function of T, so this point is a minimum, the only one inside, and is solved for. Toward the ohmic region,
- * with I the current at which D is just the room asked for, T goes with ((c - I RT)²/(I + s))^(2/3), convex in I, so
- * for tcVt <= 0 and λ = 0 the gate voltage allowed is concave in I and the least D lies at an end of the range. For
- * other devices the middle of the range is tried too, and closed in on where it is lower.
+ * together and is no such corner. Toward cutoff, where nothing passes around the device, U falls with ID, and ID is
+ * stationary where VT' + x' = 0 with x = √(ID/K): as K goes with T^-1.5, where the overdrive x is (4/3) |tcVt| T. What
+ * gate voltage a given U takes is a concave function of T, so this point is a minimum, the only one inside, and is
+ * solved for. Toward the ohmic region, with I the current at which D is just the room asked for, T goes with
+ * ((c - I RT)²/(I + s))^(2/3), convex in I, so for tcVt <= 0 and λ = 0 the gate voltage allowed is concave in I and
+ * the least D lies at an end of the range. For other devices, and in a circuit that passes some of the input around
+ * the device, the range is searched where the room falls from both of its ends. That rests on one valley at most, which
+ * is not proved for these; simulated builds have found no second one (`tests/reference/spread.test.ts`).
  */
 export function assuredSwing(box: Box): Assured {
   const { worst } = circuitOf(box.stage.circuit);
@@ -50,10 +55,8 @@ export function assuredSwing(box: Box): Assured {
   const ohmic = leastOver(box, worst.ohmic, box.device.vtMin, "ohmic");
   const towardCutoff = Math.max(0, cutoff.room);
   const towardOhmic = Math.max(0, ohmic.room);
-  return {
-    swing: { towardCutoff, towardOhmic, symmetric: Math.min(towardCutoff, towardOhmic) },
-    worst: { cutoff, ohmic },
-  };
+  const symmetric = Math.min(towardCutoff, towardOhmic);
+  return { swing: { towardCutoff, towardOhmic, symmetric }, worst: { cutoff, ohmic } };
 }
 
 type Side = "cutoff" | "ohmic";
@@ -76,7 +79,9 @@ function leastOver(box: Box, { fixed, either }: WorstEnds, vt: number, side: Sid
       if (!least || build.room < least.room) least = build;
     }
   }
-  return least as Build;
+  const found = least as Build;
+  // Where all of them are past the other side, there is no room toward this one either.
+  return { ...found, room: Number.isFinite(found.room) ? found.room : 0 };
 }
 
 /** Every combination of ends of the values named, with the fixed ones. */
@@ -106,9 +111,7 @@ function deviceAt({ device }: Box, vt: number, k: number, celsius: number): Squa
   };
 }
 
-/**
- * Room of one build toward one side, V; below zero where it is past that side altogether.
- */
+/** Room of one build toward one side, V: below zero where it is past that side, infinite where it is past the other. */
 function roomToward(side: Side, device: SquareLaw, stage: StageValues): number {
   const network = circuitOf(stage.circuit).network(stage);
   const q = solveQPoint(device, network);
@@ -130,8 +133,8 @@ function temperaturesToTry(
   const { min, max } = box.ambient;
   if (min === max) return [min];
   const ends = [min, max];
-  if (side === "cutoff") {
-    const network = circuitOf(stage.circuit).network(stage);
+  const network = circuitOf(stage.circuit).network(stage);
+  if (side === "cutoff" && network.feedthrough === 0) {
     const excess = (celsius: number) => {
       const device = deviceAt(box, vt, k, celsius);
       return solveQPoint(device, network).vgs - device.vt + (4 / 3) * box.device.tcVt * kelvin(celsius);
@@ -139,10 +142,14 @@ function temperaturesToTry(
     if (excess(min) > 0 !== excess(max) > 0) ends.push(findRoot(excess, min, max));
     return ends;
   }
-  const middle = (min + max) / 2;
-  if (at(middle).room < Math.min(at(min).room, at(max).room)) ends.push(leastBetween(at, min, max));
+  const step = VALLEY_STEP * (max - min);
+  const isValley = at(min + step).room < at(min).room && at(max - step).room < at(max).room;
+  if (isValley) ends.push(leastBetween(at, min, max));
   return ends;
 }
+
+/** How far inside the ambient range, as a share of it, the room is looked at to see whether it falls from both ends. */
+const VALLEY_STEP = 1e-4;
 
 /** Golden-section search for the lowest point of a valley (J. Kiefer, Proceedings of the AMS 4, 1953). */
 function leastBetween(at: (celsius: number) => Build, min: number, max: number): number {

@@ -67,6 +67,15 @@ export const deviceSpreadSchema = z
     }
   });
 
+/** How many builds to simulate. */
+export const buildsSchema = z.int("Builds are whole numbers").min(1, "Build at least one");
+
+/** Where the random numbers start: the same seed draws the same builds. */
+export const seedSchema = z
+  .int("Seeds are whole numbers")
+  .min(0, "Seeds are whole numbers from 0")
+  .max(4_294_967_295, "At most 4,294,967,295");
+
 export const spreadRequestSchema = z.strictObject({
   device: deviceSpreadSchema,
   stage: stageValuesSchema,
@@ -80,12 +89,8 @@ export const spreadRequestSchema = z.strictObject({
       message: "The lowest temperature is above the highest",
     })
     .prefault({}),
-  builds: z.int().min(1, "Build at least one").max(1_000_000, "At most a million builds").default(10_000),
-  seed: z
-    .int()
-    .min(0, "Seeds are whole numbers from 0")
-    .max(4_294_967_295, "At most 4,294,967,295")
-    .default(1),
+  builds: buildsSchema.max(1_000_000, "At most a million builds").default(10_000),
+  seed: seedSchema.default(1),
 });
 
 export const REGIONS = ["saturation", "ohmic", "cutoff"] as const;

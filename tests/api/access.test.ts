@@ -81,6 +81,7 @@ describe("what belongs to one team", () => {
     "/briefs/:id/restore": async () => deleted("/briefs", (await newBrief()).id),
     "/stages/:id": async () => (await newStage()).id,
     "/stages/:id/restore": async () => deleted("/stages", (await newStage()).id),
+    "/stages/:id/yield": async () => (await newStage()).id,
     "/parts/:id": async () => (await api.addPart({ partNumber: `OWN-${Math.random()}` }, tidewater.id)).id,
   };
 
