@@ -224,7 +224,8 @@ function tryCombination(
   const stage: PlainStage = { circuit, vdd, vss, ...resistors, load, bypassed };
   const q = plainPoint({ vt: part.vtTyp, k: part.kTyp, lambda: part.lambda }, stage);
   if (!q) return null;
-  if (Math.min(q.up, q.down) < (brief.swingPeak ?? 0)) return null;
+  const swing = Math.min(q.up, q.down);
+  if (swing <= 0 || swing < (brief.swingPeak ?? 0)) return null;
   const { volts, supply } = directFigures(stage, q.id);
   if (supply > (brief.supplyCurrentMax ?? none)) return null;
   if (q.id * (stage.rs + stage.rs2) < (brief.sourceDropMin ?? 0)) return null;

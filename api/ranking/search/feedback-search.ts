@@ -1,7 +1,6 @@
 import { circuitOf } from "#shared/bias/circuits/registry";
 import { highCorner } from "#shared/bias/high-corner";
 import { type Network, solveNetwork } from "#shared/bias/network";
-import { saturationCurrent, saturationOverdrive } from "#shared/bias/saturation";
 import { assuredSwing } from "#shared/bias/spread";
 import { distortionAt } from "#shared/bias/wave";
 import type { StageValues } from "#shared/schemas/bias";
@@ -20,22 +19,30 @@ const LEAST_LEVEL = 0.5e-9;
 /** Room for rounding in a bound. */
 const SLACK = 1e-9;
 
-/** First and last index of each resistor, in the order of `KEYS`. */
-type Box = readonly [number, number, number, number, number, number, number, number];
-
 /**
- * The exact search of drain-feedback stages. Here the gate hangs on the drain, so every resistor moves it and there is
- * no list of gate voltages to walk: the resistors' ranges are a box that is halved until it can be left out or is one
- * combination, which is then solved in full. The network's figures rise or fall with each resistor, so a box bounds
- * them: VGS without current rises with R2 and falls with RG and RD; what it loses per ampere rises with R2, RD and RS
- * and falls with RG; RT rises with all; the a.c. load rises with RD and RG. The drain current follows from these, and
- * no room is greater than U <= ID rL or D <= VDS.
+ * The exact search of drain-feedback stages. The gate hangs on the drain: with σ = R2/(RG + R2 + RD), the gate's share
+ * of the rail, VGS = σ (VDD - ID RD) - ID RS, so for a given RD and RS the drain current only rises with σ. What is
+ * asked for is a range of the drain current and so a window of σ, and for each R2 a run of RG. RG and R2 also load the
+ * drain a little and pass some input on to the output; how little is bounded over the values that are left, so that a
+ * window never leaves out what could do. Every combination in it is then solved in full. Without R2 σ is 1.
  */
 export class FeedbackSearch {
   readonly #problem: Problem;
   readonly #values: readonly (readonly number[])[];
   readonly #shouldStop: () => boolean;
   readonly #leastCents: number;
+  readonly #reach: Reach = {
+    rd: 0.5,
+    rs: 0.5,
+    degeneration: 0.5,
+    loadedLow: 0.5,
+    loadedHigh: 0.5,
+    outputLow: 0.5,
+    outputHigh: 0.5,
+    feedthrough: 0.5,
+  };
+  #sigmaLow = 0.5;
+  #sigmaHigh = 0.5;
   #stopped = false;
   #floor = false;
   #furthest = 0;
@@ -74,7 +81,7 @@ export class FeedbackSearch {
       kTyp: catalog.k[row],
       kMax: catalog.kMax[row],
     };
-    this.#floor = best instanceof PartBest && objective !== "cost";
+    this.#floor = best instanceof PartBest && best.isOpen && objective !== "cost";
     if (this.#floor) this.#searchAll(best);
     if (!this.#floor || best.threshold === null) {
       this.#floor = false;
@@ -84,98 +91,104 @@ export class FeedbackSearch {
   }
 
   #searchAll(best: Best): void {
-    const [rg, r2, rd, rs] = this.#values.map((values) => values.length - 1);
-    if (Math.min(rg, r2, rd, rs) < 0) return;
-    // Without R2 the circuit is another: it has a box of its own.
-    const first = this.#values[1][0] === 0 ? 1 : 0;
-    if (first === 1) this.#searchBox([0, rg, 0, 0, 0, rd, 0, rs], best);
-    if (first <= r2) this.#searchBox([0, rg, first, r2, 0, rd, 0, rs], best);
+    const [rgs, r2s, rds, rss] = this.#values;
+    if (Math.min(rgs.length, rds.length, rss.length) === 0) {
+      this.#fail("resistor-values");
+      return;
+    }
+    const dividers = r2s.filter((r2) => r2 > 0);
+    for (let at = rds.length - 1; at >= 0; at--) {
+      for (const rs of rss) {
+        this.#stopped ||= this.#shouldStop();
+        if (this.#stopped) return;
+        if (r2s[0] === 0) this.#searchUndivided(rds[at], rs, best);
+        if (dividers.length > 0) this.#searchDivided(rds[at], rs, dividers, best);
+      }
+    }
   }
 
   #fail(condition: Condition): void {
     this.#furthest = Math.max(this.#furthest, CONDITIONS.indexOf(condition));
   }
 
-  #searchBox(box: Box, best: Best): void {
-    this.#stopped ||= this.#shouldStop();
-    if (this.#stopped || !this.#mightHold(box, best)) return;
-    let widest = -1;
-    let width = 1;
-    for (let axis = 0; axis < KEYS.length; axis++) {
-      const from = box[2 * axis];
-      const to = box[2 * axis + 1];
-      const own = this.#values[axis][to] / (this.#values[axis][from] || 1);
-      if (from < to && own > width) {
-        widest = axis;
-        width = own;
-      }
-    }
-    if (widest < 0) {
-      this.#tryCombination(box, best);
-      return;
-    }
-    const middle = (box[2 * widest] + box[2 * widest + 1]) >> 1;
-    const below = [...box] as number[];
-    const above = [...box] as number[];
-    below[2 * widest + 1] = middle;
-    above[2 * widest] = middle + 1;
-    this.#searchBox(above as unknown as Box, best);
-    this.#searchBox(below as unknown as Box, best);
+  /** The stages of one RD and RS without R2: σ is 1. */
+  #searchUndivided(rd: number, rs: number, best: Best): void {
+    const [rgs] = this.#values;
+    if (!this.#findWindow(rd, rs, rgs[0], rgs[rgs.length - 1], 0, 0, best)) return;
+    if (this.#sigmaLow > 1 + SLACK || this.#sigmaHigh < 1 - SLACK) return;
+    for (const rg of rgs) this.#tryCombination(rg, 0, rd, rs, best);
   }
 
-  /** Whether some combination of a box might meet the brief and enter the list; never wrong about "can't". */
-  #mightHold(box: Box, best: Best): boolean {
-    const problem = this.#problem;
-    const [rg0, rg1, r20, r21, rd0, rd1, rs0, rs1] = box.map((at, place) => this.#values[place >> 1][at]);
-    const stage = (rg: number, r2: number, rd: number, rs: number) => this.#network(rg, r2, rd, rs);
-    const gateHigh = stage(rg0, r21, rd0, rs0).gate;
-    const gateLow = stage(rg1, r20, rd1, rs1).gate;
-    const slopeLow = stage(rg1, r20, rd0, rs0).gateSlope;
-    const slopeHigh = stage(rg0, r21, rd1, rs1).gateSlope;
-    const shortest = stage(rg0, r20, rd0, rs0);
-    const longest = stage(rg1, r21, rd1, rs1);
-    const supplyHigh = stage(rg1, r21, rd0, rs0).supply;
-    const supplyLow = stage(rg0, r20, rd1, rs1).supply;
-    const most = (vt: number, k: number) =>
-      currentOf(vt, k, this.#device.lambda, gateHigh, slopeLow, supplyHigh, shortest.total);
-    const least = (vt: number, k: number) =>
-      currentOf(vt, k, this.#device.lambda, gateLow, slopeHigh, supplyLow, longest.total);
-    const { vt, k } = this.#device;
-    const idHigh = most(vt, k);
-    const idLow = least(vt, k);
-    const towardCutoff = longest.output * idHigh;
-    const towardOhmic = supplyHigh - idLow * shortest.total;
-    const swing = Math.min(towardCutoff, towardOhmic) * (1 + SLACK);
-    if (idHigh <= 0 || swing <= 0 || swing < problem.swingPeak) {
-      this.#fail("swing");
-      return false;
+  /** The stages of one RD and RS with R2. */
+  #searchDivided(rd: number, rs: number, r2s: readonly number[], best: Best): void {
+    const [rgs] = this.#values;
+    const rgLow = rgs[0];
+    const rgHigh = rgs[rgs.length - 1];
+    if (!this.#findWindow(rd, rs, rgLow, rgHigh, r2s[0], r2s[r2s.length - 1], best)) return;
+    for (const r2 of r2s) {
+      if (!this.#findWindow(rd, rs, rgLow, rgHigh, r2, r2, best)) continue;
+      // σ falls as RG rises.
+      const from = firstAtLeast(rgs, (r2 / this.#sigmaHigh - r2 - rd) * (1 - SLACK));
+      const to = this.#sigmaLow > 0 ? (r2 / this.#sigmaLow - r2 - rd) * (1 + SLACK) : rgHigh;
+      for (let at = from; at < rgs.length && rgs[at] <= to; at++) {
+        this.#tryCombination(rgs[at], r2, rd, rs, best);
+      }
     }
-    if (idLow > problem.supplyCurrentMax * (1 + SLACK)) {
-      this.#fail("supply-current");
-      return false;
-    }
-    if (idHigh * rs1 * (1 + SLACK) < problem.sourceDropMin) {
-      this.#fail("source-drop");
-      return false;
-    }
-    const threshold = best.threshold;
+  }
+
+  /**
+   * Finds the window of σ that can hold what the brief and the list so far ask for; false where there is none.
+   *
+   * @param rgLow least RG that is left, ohms, `rgHigh` the greatest; likewise R2, 0 for none
+   */
+  #findWindow(
+    rd: number,
+    rs: number,
+    rgLow: number,
+    rgHigh: number,
+    r2Low: number,
+    r2High: number,
+    best: Best,
+  ): boolean {
+    const { vdd, load, bypassed, swingPeak, sourceDropMin, supplyCurrentMax, railTolerance } = this.#problem;
     const { level, centring, supply } = this.#demand(best);
-    if (centring < 1) {
-      // U is at least what is left of ID rL once the input passes around the device, D at most VDS.
-      const x = Math.sqrt(idHigh / k);
-      const passed = stage(rg0, r20, rd1, rs0).feedthrough * (x + longest.degeneration * idHigh);
-      const low = shortest.output * idLow - passed;
-      if (low > towardOhmic && (low - towardOhmic) / (low + towardOhmic) > centring * (1 + SLACK))
-        return false;
+    const beside = 1 / rd + (load === null ? 0 : 1 / load);
+    const reach = this.#reach;
+    reach.rd = rd;
+    reach.rs = rs;
+    reach.degeneration = bypassed ? 0 : rs;
+    reach.loadedLow = r2Low === 0 ? 1 : (rgLow + r2Low) / (rgLow + r2Low + rd);
+    reach.loadedHigh = r2Low === 0 ? 1 : (rgHigh + r2High) / (rgHigh + r2High + rd);
+    reach.outputLow = 1 / (beside + 1 / rgLow);
+    reach.outputHigh = 1 / (beside + 1 / rgHigh);
+    reach.feedthrough = reach.outputLow / rgLow;
+    const { vt, k, lambda } = this.#device;
+    const least = Math.max(swingPeak / reach.outputHigh, rs > 0 ? sourceDropMin / rs : 0);
+    const most = Math.min(
+      mostCurrent(reach, k, lambda, vdd, swingPeak, centring),
+      Math.min(supplyCurrentMax, supply) * (1 + SLACK),
+    );
+    if (!(least <= most * (1 + SLACK))) {
+      if (swingPeak > 0 || sourceDropMin > 0) this.#fail("swing");
+      return false;
     }
+    this.#sigmaLow = sigmaFor(reach, least, vt, k * (1 + lambda * vdd), vdd);
+    this.#sigmaHigh = sigmaFor(reach, most, vt, k, vdd);
     if (level > 0) {
       const spread = this.#spread as PartSpread;
       const hottest = spread.temperatures - 1;
-      if (longest.output * most(spread.vtMaxAt[0], spread.kMinAt[0]) * (1 + SLACK) < level) return false;
-      const current = least(spread.vtMinAt[hottest], spread.kMaxAt[hottest]);
-      if ((supplyHigh - current * shortest.total) * (1 + SLACK) < level) return false;
+      const low = vdd * (1 - railTolerance);
+      const kLow = spread.kMinAt[0] * (1 + lambda * low);
+      const leastSigma = sigmaFor(reach, level / reach.outputHigh, spread.vtMaxAt[0], kLow, low);
+      this.#sigmaLow = Math.max(this.#sigmaLow, leastSigma);
+      for (const rail of [low, vdd * (1 + railTolerance)]) {
+        const allowed = mostCurrent(reach, spread.kMaxAt[hottest], lambda, rail, level, 1);
+        if (allowed <= 0) return false;
+        const mostSigma = sigmaFor(reach, allowed, spread.vtMinAt[hottest], spread.kMaxAt[hottest], rail);
+        this.#sigmaHigh = Math.min(this.#sigmaHigh, mostSigma);
+      }
     }
-    return threshold === null || idLow <= supply * (1 + SLACK);
+    return this.#sigmaLow <= this.#sigmaHigh * (1 + SLACK);
   }
 
   /** What the list asks of the next candidate; the supply current only where all else can at best be equal. */
@@ -219,32 +232,29 @@ export class FeedbackSearch {
     };
   }
 
-  #network(rg: number, r2: number, rd: number, rs: number): Network {
-    return CIRCUIT.network(this.#stage(rg, r2, rd, rs));
-  }
-
   /** Solves one combination in full and offers it. */
-  #tryCombination(box: Box, best: Best): void {
+  #tryCombination(rg: number, r2: number, rd: number, rs: number, best: Best): void {
     const problem = this.#problem;
     const device = this.#device;
-    const [rg, r2, rd, rs] = KEYS.map((_, axis) => this.#values[axis][box[2 * axis]]);
     const stage = this.#stage(rg, r2, rd, rs);
     const network = CIRCUIT.network(stage);
     const solved = solveNetwork(device, network);
     const { swing, id } = solved;
-    if (!swing || swing.symmetric < problem.swingPeak) {
+    if (!swing || swing.symmetric <= 0 || swing.symmetric < problem.swingPeak) {
       this.#fail("swing");
       return;
     }
     const supply = CIRCUIT.supplyCurrent(stage, id);
+    const bucket = bucketOf(swing.towardCutoff, swing.towardOhmic);
+    const threshold = best.threshold;
+    if (threshold && problem.objective === "centred" && bucket > threshold.major) return;
+    // No build swings further than the typical one, so this is known before the whole box is looked through.
+    if (nanovolts(swing.symmetric) < this.#demand(best).level * 1e9) return;
     const failed = this.#failed(stage, network, solved, supply);
     if (failed) {
       this.#fail(failed);
       return;
     }
-    const bucket = bucketOf(swing.towardCutoff, swing.towardOhmic);
-    const threshold = best.threshold;
-    if (threshold && problem.objective === "centred" && bucket > threshold.major) return;
     const assured = nanovolts(this.#assured(stage));
     if (problem.objective === "cost" && assured * 1e-9 < problem.swingPeak - 0.5e-9) {
       this.#fail("assured-swing");
@@ -324,22 +334,87 @@ export class FeedbackSearch {
   }
 }
 
-/** The drain current of a saturated device in a network, A; 0 where it is off. */
-function currentOf(
-  vt: number,
+/** One RD and RS with the ends between which RG and R2 leave the rest. */
+type Reach = {
+  rd: number;
+  rs: number;
+  degeneration: number;
+  /** The share of the rail at the drain when the device is off. */
+  loadedLow: number;
+  loadedHigh: number;
+  /** The a.c. load, ohms. */
+  outputLow: number;
+  outputHigh: number;
+  /** The greatest share of the input that passes the device by. */
+  feedthrough: number;
+};
+
+/** The σ at which a device carries a current: VGS = σ (V - I RD) - I RS; Infinity where RD takes the whole rail. */
+function sigmaFor({ rd, rs }: Reach, current: number, vt: number, k: number, rail: number): number {
+  const drain = rail - current * rd;
+  return drain > 0 ? (vt + Math.sqrt(current / k) + current * rs) / drain : Number.POSITIVE_INFINITY;
+}
+
+/**
+ * An upper bound on the drain current of a build with a room D toward the ohmic region and a centring error c at most.
+ *
+ * The current has to rise by δ >= D/rL, and by δ >= U/(m rL), m = (1 + c)/(1 - c), U >= rL ID - κ (x + ID R), R what of
+ * RS carries signal. At the edge of saturation K v² (1 + λ v) = ID + δ, and (1 - κ) v <= VDS - (rL + (1 - κ) R) δ,
+ * since the input that gets there is v - x + R δ at most v + R δ. With K (1 + λ V) for K this is a quadratic in v.
+ */
+function mostCurrent(
+  reach: Reach,
   k: number,
   lambda: number,
-  gate: number,
-  gateSlope: number,
-  supply: number,
-  total: number,
+  rail: number,
+  room: number,
+  centring: number,
 ): number {
-  if (gate <= vt) return 0;
-  const device = { vt, k, lambda };
-  return saturationCurrent(
-    device,
-    supply,
-    saturationOverdrive(device, supply, gate - vt, gateSlope, total),
-    total,
-  );
+  const { rd, rs, degeneration, loadedLow, loadedHigh, outputLow, outputHigh, feedthrough } = reach;
+  const kUpper = k * (1 + lambda * rail);
+  const past = 1 - feedthrough;
+  const step = outputLow + past * degeneration;
+  const total = loadedLow * rd + rs;
+  const rise = room / outputHigh;
+  let most = currentWhere(kUpper, past, total, loadedHigh * rail - step * rise, rise, 0);
+  if (centring < 1 && most > 0) {
+    const m = (1 + centring) / (1 - centring);
+    const share = Math.max(0, outputLow - feedthrough * degeneration) / (m * outputHigh);
+    // x is at most that of the greatest current.
+    const passed = (feedthrough * Math.sqrt(most / k)) / (m * outputHigh);
+    most = Math.min(
+      most,
+      currentWhere(kUpper, past, total + step * share, loadedHigh * rail + step * passed, -passed, share),
+    );
+  }
+  return most;
+}
+
+/** The greatest I with (1 - κ) v + I T <= V, K v² = I (1 + share) + rise; 0 where there is none. */
+function currentWhere(
+  k: number,
+  past: number,
+  total: number,
+  rail: number,
+  rise: number,
+  share: number,
+): number {
+  // I = (K v² - rise)/(1 + share) put in: T K v²/(1 + share) + (1 - κ) v = V + T rise/(1 + share).
+  const t = total / (1 + share);
+  const right = rail + t * rise;
+  if (right <= 0) return 0;
+  const v = (2 * right) / (past + Math.sqrt(past * past + 4 * t * k * right));
+  return Math.max(0, (rail - past * v) / total);
+}
+
+/** Index of the first value that is not below a given one, in a rising list. */
+function firstAtLeast(values: readonly number[], least: number): number {
+  let low = 0;
+  let high = values.length;
+  while (low < high) {
+    const middle = (low + high) >>> 1;
+    if (values[middle] < least) low = middle + 1;
+    else high = middle;
+  }
+  return low;
 }

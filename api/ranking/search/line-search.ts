@@ -168,8 +168,9 @@ export class LineSearch {
     if (a.length * b.length * c.length === 0 || this.#every.ratios.length === 0) return "resistor-values";
     if (!this.#prices.startPart(catalog.cents[row])) return "no-price";
     this.#greatestSwing = greatestAssuredSwing(this.#problem, this.#spread);
-    // One of many parts is first looked through for something dead centre and assured, as its best mostly is.
-    this.#floor = best instanceof PartBest && this.#problem.objective !== "cost";
+    // Where there is nothing to beat yet, a part is first looked through for something dead centre and assured, as its
+    // best mostly is.
+    this.#floor = best instanceof PartBest && best.isOpen && this.#problem.objective !== "cost";
     if (this.#floor) this.#searchAll(best);
     if (!this.#floor || best.threshold === null) {
       this.#floor = false;

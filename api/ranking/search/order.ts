@@ -79,6 +79,11 @@ export class PartBest implements Best {
   readonly #bar: Candidate | null;
   found: Candidate | null = null;
 
+  /** Whether the part's very best is wanted, and not only what comes before a bar. */
+  get isOpen(): boolean {
+    return this.#bar === null;
+  }
+
   /** @param bar the last place of the answer so far, when all its places are taken */
   constructor(bar: Candidate | null) {
     this.#bar = bar;
