@@ -6,6 +6,7 @@ import type { Swing } from "#shared/schemas/bias";
 import { RESISTOR_KEYS } from "#shared/schemas/circuit";
 import { type Random, seededRandom } from "../support/random";
 import { SEED } from "../support/seed";
+import { plainAssured } from "./plain-stage";
 import { drawStages } from "./random-stages";
 
 /** Stages of each circuit; EVENSWING_STAGES=200 is the full form. */
@@ -39,6 +40,27 @@ describe(`every build inside the spread has the assured swing (seed ${SEED})`, (
     expect(worst.length).toBeGreaterThan(0.5 * STAGES);
     const reached = worst.filter(({ assured, least }) => least.symmetric < 1.03 * assured.symmetric);
     expect(reached.length).toBeGreaterThanOrEqual(0.9 * worst.length);
+  });
+});
+
+describe(`the assured swing is the least of all corners and of the valleys between them (seed ${SEED})`, () => {
+  const random = seededRandom(SEED + 21);
+  const stages = drawStages(random, 6, [1.6, 8]).map((drawn) => ({
+    ...drawn,
+    box: boxAround(random, drawn),
+  }));
+
+  it.each(stages)("as circuit laws solved by halving have it: $name", ({ box }) => {
+    const { device, stage, tolerance, ambient } = box;
+    const plain = plainAssured({
+      ...{ vt: [device.vtMin, device.vtMax], k: [device.kMin, device.kMax] },
+      ...{ lambda: device.lambda, tcVt: device.tcVt },
+      stage: { ...stage, load: stage.rl, bypassed: stage.sourceBypassed },
+      ...{ resistors: tolerance.resistors, rail: tolerance.rail },
+      ambient: [ambient.min, ambient.max],
+    });
+    const { symmetric } = assuredSwing(box).swing;
+    expect(Math.abs(symmetric - plain)).toBeLessThanOrEqual(1e-7 * Math.max(plain, 0.01));
   });
 });
 
