@@ -13,9 +13,19 @@ import { Q_POINT } from "./sections/q-point";
 import { ASSUMPTIONS, RANKING, VALUES } from "./sections/ranking";
 import { FREQUENCY, RATINGS } from "./sections/ratings";
 import { SIGNAL } from "./sections/signal";
+import { SPREAD } from "./sections/spread";
 import { SWING } from "./sections/swing";
 
-const SECTIONS: readonly MethodSection[] = [DEVICE, Q_POINT, SWING, SIGNAL, FREQUENCY, RATINGS, CIRCUITS];
+const SECTIONS: readonly MethodSection[] = [
+  DEVICE,
+  Q_POINT,
+  SWING,
+  SPREAD,
+  SIGNAL,
+  FREQUENCY,
+  RATINGS,
+  CIRCUITS,
+];
 
 /** What follows the formulas. */
 const CLOSING = [

@@ -46,7 +46,7 @@ export const SWING: MethodSection = {
       title: "Where the Q-point may land",
       formulas: [],
       words:
-        "The hatched patch of the load-line figure is the outline of the Q-points of 512 builds: threshold and conduction parameter at both ends of the datasheet range, each resistor and the rail at both ends of its tolerance, at the lowest and the highest ambient temperature of the brief.",
+        "The hatched patch of the load-line figure is the outline of the Q-points of the builds at every corner of the spread: threshold and conduction parameter at both ends of the datasheet range, each resistor and the rail at both ends of its tolerance, at the lowest and the highest ambient temperature of the brief.",
       source: "Each build is solved like the stage itself.",
       limits:
         "It joins the corners of the spread. A build inside the ranges may land a little outside an edge between two corners.",
