@@ -11,6 +11,7 @@ import type { Problem } from "../problem";
 import { CONDITIONS, type Condition, type Device, readDevice } from "./conditions";
 import { type Best, bucketOf, nanovolts, PartBest, rankOf } from "./order";
 import { type PartSpread, partSpread } from "./part-spread";
+import { swingBound } from "./windows";
 
 const CIRCUIT = circuitOf("drain-feedback");
 const KEYS = ["rg", "r2", "rd", "rs"] as const;
@@ -97,12 +98,22 @@ export class FeedbackSearch {
       return;
     }
     const dividers = r2s.filter((r2) => r2 > 0);
-    for (let at = rds.length - 1; at >= 0; at--) {
+    // The greatest swing at dead centre first: what is found there leaves little of the rest. RG and R2 only lower it.
+    const { vdd, load, bypassed } = this.#problem;
+    const kUpper = this.#device.k * (1 + this.#device.lambda * vdd);
+    const bound = (rd: number, rs: number) => {
+      const beside = load === null ? rd : (rd * load) / (rd + load);
+      const degeneration = bypassed ? 0 : rs;
+      const line = { load: beside, degeneration, slope: beside + degeneration, total: rd + rs };
+      return swingBound(vdd, kUpper, line) * (1 + SLACK);
+    };
+    for (const rd of [...rds].sort((a, b) => bound(b, 0) - bound(a, 0))) {
       for (const rs of rss) {
+        if (bound(rd, rs) < this.#demand(best).level) break;
         this.#stopped ||= this.#shouldStop();
         if (this.#stopped) return;
-        if (r2s[0] === 0) this.#searchUndivided(rds[at], rs, best);
-        if (dividers.length > 0) this.#searchDivided(rds[at], rs, dividers, best);
+        if (r2s[0] === 0) this.#searchUndivided(rd, rs, best);
+        if (dividers.length > 0) this.#searchDivided(rd, rs, dividers, best);
       }
     }
   }
@@ -126,13 +137,25 @@ export class FeedbackSearch {
     const rgHigh = rgs[rgs.length - 1];
     if (!this.#findWindow(rd, rs, rgLow, rgHigh, r2s[0], r2s[r2s.length - 1], best)) return;
     for (const r2 of r2s) {
-      if (!this.#findWindow(rd, rs, rgLow, rgHigh, r2, r2, best)) continue;
-      // σ falls as RG rises.
-      const from = firstAtLeast(rgs, (r2 / this.#sigmaHigh - r2 - rd) * (1 - SLACK));
-      const to = this.#sigmaLow > 0 ? (r2 / this.#sigmaLow - r2 - rd) * (1 + SLACK) : rgHigh;
-      for (let at = from; at < rgs.length && rgs[at] <= to; at++) {
-        this.#tryCombination(rgs[at], r2, rd, rs, best);
+      let from = 0;
+      let to = rgs.length - 1;
+      let count = rgs.length + 1;
+      // The fewer values of RG are left, the less they differ in how they load the drain, and the tighter the window.
+      while (from <= to && to - from + 1 < count) {
+        count = to - from + 1;
+        if (!this.#findWindow(rd, rs, rgs[from], rgs[to], r2, r2, best)) {
+          count = 0;
+          break;
+        }
+        // σ falls as RG rises.
+        from = Math.max(from, firstAtLeast(rgs, (r2 / this.#sigmaHigh - r2 - rd) * (1 - SLACK)));
+        if (this.#sigmaLow > 0) {
+          to = Math.min(to, firstAtLeast(rgs, (r2 / this.#sigmaLow - r2 - rd) * (1 + SLACK)));
+          if (rgs[to] > (r2 / this.#sigmaLow - r2 - rd) * (1 + SLACK)) to--;
+        }
       }
+      if (count === 0) continue;
+      for (let at = from; at <= to; at++) this.#tryCombination(rgs[at], r2, rd, rs, best);
     }
   }
 
