@@ -11,7 +11,7 @@ import time
 import numpy as np
 
 # Elements of a vector: the fastest of these on this machine is used, so that NumPy is seen at its best.
-CHUNKS = (16_384, 65_536, 262_144)
+CHUNKS = (65_536, 131_072, 262_144)
 
 
 def overdrive(drive, k, lam, vdd, total, rs):
