@@ -4,7 +4,7 @@ import { BLOCK, newBuildColumns, newNetworkColumns } from "./builds/columns";
 import { type BuildConditions, survivorsFilter } from "./builds/conditions";
 import { buildDrawer, type LotReading } from "./builds/draw-builds";
 import { FILL_NETWORKS } from "./builds/fill-networks";
-import { keepSwinging, newSurvivors } from "./builds/survivors";
+import { keepSwinging, newSurvivors, solveOverdrives } from "./builds/survivors";
 import { circuitOf } from "./circuits/registry";
 import { solveQPoint } from "./network";
 import type { BuildBox } from "./spread";
@@ -39,9 +39,10 @@ export function simulateBuilds(
   const draw = buildDrawer(box, readings, seed, held);
   const fillNetworks = FILL_NETWORKS[stage.circuit];
   const keepMeeting = survivorsFilter(conditions, stage, device.lambda, box.tolerance);
-  const overdrive = typicalOverdrive(box);
+  const share = typicalShare(box);
   const drawn = newBuildColumns();
   const networks = newNetworkColumns();
+  const overdrives = new Float64Array(BLOCK);
   const survivors = newSurvivors();
   let passed = 0;
   let done = 0;
@@ -49,7 +50,8 @@ export function simulateBuilds(
     const count = Math.min(BLOCK, builds - done);
     draw(drawn, count);
     fillNetworks(drawn, count, stage, networks);
-    keepSwinging(drawn, networks, device.lambda, conditions.swingPeak, overdrive, count, survivors);
+    solveOverdrives(drawn, networks, device.lambda, share, count, overdrives);
+    keepSwinging(drawn, networks, overdrives, device.lambda, conditions.swingPeak, count, survivors);
     keepMeeting(drawn, networks, survivors);
     passed += survivors.count;
     done += count;
@@ -57,9 +59,11 @@ export function simulateBuilds(
   return { fraction: done > 0 ? passed / done : 0, ...wilsonInterval(passed, done), builds: done };
 }
 
-function typicalOverdrive({ device: { vtTyp, kTyp, lambda }, stage }: BuildBox): number {
-  const typical = { vt: vtTyp, k: kTyp, lambda };
-  return Math.max(0, solveQPoint(typical, circuitOf(stage.circuit).network(stage)).vgs - vtTyp);
+/** What share 1 + λ VDS of the typical build is of 1 + λ times all of its supply. */
+function typicalShare({ device: { vtTyp, kTyp, lambda }, stage }: BuildBox): number {
+  const network = circuitOf(stage.circuit).network(stage);
+  const { vds } = solveQPoint({ vt: vtTyp, k: kTyp, lambda }, network);
+  return (1 + lambda * Math.max(0, vds)) / (1 + lambda * network.supply);
 }
 
 /**

@@ -1,7 +1,7 @@
 import type { Resistors } from "#shared/schemas/circuit";
 
 /** Builds that are drawn and tried together: few enough for their figures to stay close to the processor. */
-export const BLOCK = 512;
+export const BLOCK = 240;
 
 export type Column = Float64Array;
 

@@ -1,5 +1,6 @@
 import { RESISTOR_KEYS } from "#shared/schemas/circuit";
 import type { BuildParameter } from "#shared/schemas/yield";
+import { kelvin, thresholdAt } from "../device";
 import type { BuildBox } from "../spread";
 import { BLOCK, type BuildColumns, type Column } from "./columns";
 import { RandomStream } from "./random-stream";
@@ -7,11 +8,7 @@ import { RandomStream } from "./random-stream";
 /** Threshold and conduction parameter of one piece of a lot, measured at 25 °C: volts, A/V². */
 export type LotReading = { vt: number; k: number };
 
-/** The range of VT and K in standard deviations either way of its middle. */
-const SIGMAS = 3;
 const REFERENCE_CELSIUS = 25;
-const KELVIN_AT_ZERO_CELSIUS = 273.15;
-const REFERENCE_KELVIN = REFERENCE_CELSIUS + KELVIN_AT_ZERO_CELSIUS;
 
 /**
  * Draws builds of a box, block by block.
@@ -35,37 +32,34 @@ export function buildDrawer(
 ): (into: BuildColumns, count: number) => void {
   const { device, stage, tolerance, ambient } = box;
   const stream = new RandomStream(seed);
-  const other = new Float64Array(BLOCK);
+  const pieces = new Float64Array(BLOCK);
   const resistors = RESISTOR_KEYS.filter((key) => stage[key] > 0);
   const lot = readings && readings.length > 0 ? readings : null;
   const lotVt = Float64Array.from(lot ?? [], ({ vt }) => vt);
   const lotK = Float64Array.from(lot ?? [], ({ k }) => k);
   const steady = Math.min(ambient.max, Math.max(ambient.min, REFERENCE_CELSIUS));
 
+  const isReference = ambient.min === REFERENCE_CELSIUS && ambient.max === REFERENCE_CELSIUS;
+
   const fillDevices = ({ vt, k }: BuildColumns, count: number) => {
     if (lot) {
-      stream.fillUniform(other, count);
+      stream.fillUniform(pieces, count, 0, lotVt.length);
       for (let at = 0; at < count; at++) {
-        const piece = Math.floor(other[at] * lotVt.length);
+        const piece = Math.floor(pieces[at]);
         vt[at] = lotVt[piece];
         k[at] = lotK[piece];
       }
     } else {
-      stream.fillNormalPairs(vt, k, count, SIGMAS);
-      spreadNormal(vt, count, device.vtMin, device.vtMax);
-      spreadNormal(k, count, device.kMin, device.kMax);
+      stream.fillNormal(vt, count, device.vtMin, device.vtMax);
+      stream.fillNormal(k, count, device.kMin, device.kMax);
     }
     if (held === "vt") vt.fill(lot ? meanOf(lotVt) : device.vtTyp, 0, count);
     if (held === "k") k.fill(lot ? meanOf(lotK) : device.kTyp, 0, count);
   };
 
   const fillWithin = (column: Column, count: number, low: number, high: number) => {
-    if (low === high) {
-      column.fill(low, 0, count);
-      return;
-    }
-    stream.fillUniform(column, count);
-    for (let at = 0; at < count; at++) column[at] = low + (high - low) * column[at];
+    if (low === high) column.fill(low, 0, count);
+    else stream.fillUniform(column, count, low, high);
   };
   const fillAround = (column: Column, count: number, nominal: number, share: number, isHeld: boolean) => {
     fillWithin(column, count, nominal * (1 - share), nominal * (1 + share));
@@ -76,27 +70,23 @@ export function buildDrawer(
     fillDevices(into, count);
     fillWithin(into.celsius, count, ambient.min, ambient.max);
     if (held === "ambient") into.celsius.fill(steady, 0, count);
-    heat(into, count, device.tcVt);
+    if (!isReference) heat(into, count, device.tcVt);
     fillAround(into.rail, count, stage.vdd, tolerance.rail, held === "rail");
-    fillAround(into.negativeRail, count, stage.vss, tolerance.rail, held === "rail");
+    if (stage.vss > 0) {
+      fillAround(into.negativeRail, count, stage.vss, tolerance.rail, held === "rail");
+    }
     for (const key of resistors) {
       fillAround(into.resistors[key], count, stage[key], tolerance.resistors, held === "resistors");
     }
   };
 }
 
-/** Turns standard normal numbers into ones around the middle of a range. */
-function spreadNormal(column: Column, count: number, low: number, high: number): void {
-  const middle = (low + high) / 2;
-  const sigma = (high - low) / (2 * SIGMAS);
-  for (let at = 0; at < count; at++) column[at] = middle + sigma * column[at];
-}
-
-/** Brings VT and K from 25 °C to each build's temperature; `thresholdAt` and `conductionAt` of the device law. */
+/** Brings VT and K from 25 °C to each build's temperature; `conductionAt` with its power spelt out. */
 function heat({ vt, k, celsius }: BuildColumns, count: number, tcVt: number): void {
+  const reference = kelvin(REFERENCE_CELSIUS);
   for (let at = 0; at < count; at++) {
-    const heated = (celsius[at] + KELVIN_AT_ZERO_CELSIUS) / REFERENCE_KELVIN;
-    vt[at] += tcVt * (celsius[at] - REFERENCE_CELSIUS);
+    const heated = kelvin(celsius[at]) / reference;
+    vt[at] = thresholdAt(vt[at], tcVt, celsius[at]);
     k[at] /= heated * Math.sqrt(heated);
   }
 }

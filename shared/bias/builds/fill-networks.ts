@@ -7,14 +7,15 @@ type FillNetworks = (builds: BuildColumns, count: number, stage: StageValues, in
 
 /**
  * Each circuit's `network` again, over columns: what simulating builds spends its time on, so there is no object a
- * build. Held to the circuits' own by the tests.
+ * build. Held to the circuits' own by the tests. Only drain feedback passes anything around the device; elsewhere that
+ * column stays 0.
  */
 export const FILL_NETWORKS: Record<CircuitName, FillNetworks> = {
   "four-resistor": ({ rail, resistors: { r1, r2, rd, rs } }, count, stage, into) => {
     const loaded = conductanceOf(stage.rl);
     const inSignal = stage.sourceBypassed ? 0 : 1;
     for (let at = 0; at < count; at++) {
-      into.gate[at] = rail[at] / (1 + r1[at] / r2[at]);
+      into.gate[at] = (rail[at] * r2[at]) / (r1[at] + r2[at]);
       into.supply[at] = rail[at];
       into.gateSlope[at] = rs[at];
       into.total[at] = rd[at] + rs[at];
@@ -24,7 +25,7 @@ export const FILL_NETWORKS: Record<CircuitName, FillNetworks> = {
   "split-source": ({ rail, resistors: { r1, r2, rd, rs, rs2 } }, count, stage, into) => {
     const loaded = conductanceOf(stage.rl);
     for (let at = 0; at < count; at++) {
-      into.gate[at] = rail[at] / (1 + r1[at] / r2[at]);
+      into.gate[at] = (rail[at] * r2[at]) / (r1[at] + r2[at]);
       into.supply[at] = rail[at];
       into.gateSlope[at] = rs[at] + rs2[at];
       into.total[at] = rd[at] + rs[at] + rs2[at];
@@ -35,14 +36,13 @@ export const FILL_NETWORKS: Record<CircuitName, FillNetworks> = {
     const loaded = conductanceOf(stage.rl);
     for (let at = 0; at < count; at++) {
       const output = rs[at] / (1 + rs[at] * loaded);
-      into.gate[at] = rail[at] / (1 + r1[at] / r2[at]);
+      into.gate[at] = (rail[at] * r2[at]) / (r1[at] + r2[at]);
       into.supply[at] = rail[at];
       into.gateSlope[at] = rs[at];
       into.total[at] = rs[at];
       into.output[at] = output;
       into.degeneration[at] = output;
       into.slope[at] = output;
-      into.feedthrough[at] = 0;
     }
   },
   "drain-feedback": ({ rail, resistors: { rg, r2, rd, rs } }, count, stage, into) => {
@@ -82,5 +82,4 @@ function fillDrainOutput(into: NetworkColumns, at: number, output: number, degen
   into.output[at] = output;
   into.degeneration[at] = degeneration;
   into.slope[at] = output + degeneration;
-  into.feedthrough[at] = 0;
 }

@@ -1,5 +1,5 @@
 import { describe, expect, it } from "vitest";
-import { newBuildColumns, newNetworkColumns } from "#shared/bias/builds/columns";
+import { BLOCK, newBuildColumns, newNetworkColumns } from "#shared/bias/builds/columns";
 import { type BuildConditions, conditionsOf, SATURATED } from "#shared/bias/builds/conditions";
 import { buildDrawer } from "#shared/bias/builds/draw-builds";
 import { FILL_NETWORKS } from "#shared/bias/builds/fill-networks";
@@ -41,17 +41,27 @@ function simulationOf(
 /** Every build that a simulation draws, one object each. */
 function drawnBuilds(simulation: Simulation, count: number) {
   const columns = newBuildColumns();
-  buildDrawer(simulation.box, simulation.readings, simulation.seed, null)(columns, count);
-  return Array.from({ length: count }, (_, at) => ({
-    vt: columns.vt[at],
-    k: columns.k[at],
-    celsius: columns.celsius[at],
-    rail: columns.rail[at],
-    negativeRail: columns.negativeRail[at],
-    resistors: Object.fromEntries(
-      RESISTOR_KEYS.map((key) => [key, simulation.box.stage[key] > 0 ? columns.resistors[key][at] : 0]),
-    ) as Resistors,
-  }));
+  const draw = buildDrawer(simulation.box, simulation.readings, simulation.seed, null);
+  const builds = [];
+  for (let from = 0; from < count; from += BLOCK) {
+    const some = Math.min(BLOCK, count - from);
+    draw(columns, some);
+    for (let at = 0; at < some; at++) {
+      const resistors = RESISTOR_KEYS.map((key) => [
+        key,
+        simulation.box.stage[key] > 0 ? columns.resistors[key][at] : 0,
+      ]);
+      builds.push({
+        vt: columns.vt[at],
+        k: columns.k[at],
+        celsius: columns.celsius[at],
+        rail: columns.rail[at],
+        negativeRail: columns.negativeRail[at],
+        resistors: Object.fromEntries(resistors) as Resistors,
+      });
+    }
+  }
+  return builds;
 }
 
 /** Whether one build meets a brief, asked of the sheet that the product shows for a stage of just these values. */
