@@ -1,7 +1,10 @@
 import { useQuery } from "@tanstack/react-query";
 import { useMemo } from "react";
 import { Link, useNavigate } from "react-router-dom";
+import { assuredSwing, boxOf } from "#shared/bias/spread";
 import { figureStage, type StageFigures } from "#shared/bias/stage-sheet";
+import type { Swing } from "#shared/schemas/bias";
+import { RESISTOR_KEYS, type ResistorKey } from "#shared/schemas/circuit";
 import type { Stage } from "#shared/schemas/stage";
 import { BalanceBar } from "../../figures/balance-bar";
 import { problemOf } from "../../lib/api";
@@ -20,7 +23,13 @@ import { useMediaQuery } from "../../ui/use-media-query";
 import { Value } from "../../ui/value";
 import { DeleteStage } from "./delete-stage";
 
-type Row = { stage: Stage; figures: StageFigures };
+type Row = { stage: Stage; figures: StageFigures; assured: Swing };
+
+function rowOf(stage: Stage): Row {
+  const { part, brief, resistors } = stage;
+  const figures = figureStage(part, brief, resistors);
+  return { stage, figures, assured: assuredSwing(boxOf(part, brief, figures.values)).swing };
+}
 
 /** The team's kept stages. */
 export function StagesPage() {
@@ -29,10 +38,7 @@ export function StagesPage() {
   const mayWrite = useMay("design:write");
   const navigate = useNavigate();
   const isNarrow = !useMediaQuery("(width >= 52rem)");
-  const rows = useMemo(
-    () => data?.map((stage) => ({ stage, figures: figureStage(stage.part, stage.brief, stage.resistors) })),
-    [data],
-  );
+  const rows = useMemo(() => data?.map(rowOf), [data]);
   return (
     <>
       <PageTitle>Stages</PageTitle>
@@ -55,7 +61,7 @@ export function StagesPage() {
         ) : (
           <DataTable
             label="Kept stages"
-            columns={columnsFor(mayWrite, isNarrow)}
+            columns={columnsFor(mayWrite, isNarrow, rows)}
             rows={rows}
             rowId={({ stage }) => String(stage.id)}
             onOpen={({ stage }) => navigate(`/stages/${stage.id}`)}
@@ -66,7 +72,12 @@ export function StagesPage() {
   );
 }
 
-function columnsFor(mayWrite: boolean, isNarrow: boolean): DataTableColumn<Row>[] {
+/** The resistors that some stage has: circuits differ in theirs. */
+function resistorsAmong(rows: readonly Row[]): ResistorKey[] {
+  return RESISTOR_KEYS.filter((key) => rows.some(({ stage }) => stage.resistors[key] > 0));
+}
+
+function columnsFor(mayWrite: boolean, isNarrow: boolean, rows: readonly Row[]): DataTableColumn<Row>[] {
   const name: DataTableColumn<Row> = {
     id: "name",
     header: "stage",
@@ -91,17 +102,17 @@ function columnsFor(mayWrite: boolean, isNarrow: boolean): DataTableColumn<Row>[
     name: "Room each way",
     className: "min-w-56",
     // Stages differ in their rails, so each bar has its own scale: what compares is how centred they are.
-    cell: ({ figures: { bias } }) =>
+    cell: ({ figures: { bias }, assured }) =>
       bias.swing && (
         <BalanceBar
           towardOhmic={bias.swing.towardOhmic}
           towardCutoff={bias.swing.towardCutoff}
-          assured={null}
+          assured={assured}
           scale={Math.max(bias.swing.towardOhmic, bias.swing.towardCutoff)}
         />
       ),
   };
-  const resistors = (["r1", "r2", "rd", "rs"] as const).map(
+  const resistors = resistorsAmong(rows).map(
     (id): DataTableColumn<Row> => ({
       id,
       header: id.toUpperCase(),
@@ -125,6 +136,15 @@ function columnsFor(mayWrite: boolean, isNarrow: boolean): DataTableColumn<Row>[
       numeric: true,
       sortValue: ({ figures: { bias } }) => bias.swing?.symmetric,
       cell: ({ figures: { bias } }) => <Value number={bias.swing?.symmetric} unit="V" />,
+    },
+    {
+      id: "assured",
+      header: <span className="inline-block w-14">assured swing</span>,
+      name: "Assured swing",
+      numeric: true,
+      hideable: true,
+      sortValue: ({ assured }) => assured.symmetric,
+      cell: ({ assured }) => (assured.symmetric > 0 ? <Value number={assured.symmetric} unit="V" /> : "none"),
     },
     {
       id: "rail",
