@@ -6,7 +6,7 @@ import { NewStagePage } from "../../../web/features/stages/new-stage-page";
 import { stageLink } from "../../../web/lib/stage-link";
 import { renderAt } from "../support/render";
 import { API, playServer, server, signedInAs } from "../support/server";
-import { BRIEF, buildStage, figure, PAGES, PART, playStage, RESISTORS, step } from "../support/stages";
+import { BRIEF, buildStage, figure, PAGES, PART, playStage, RESISTORS, step, YIELD } from "../support/stages";
 
 playServer();
 
@@ -25,6 +25,7 @@ describe("a fit that isn't kept", () => {
     server.use(
       http.get(`${API}/parts/1`, () => HttpResponse.json(PART)),
       http.get(`${API}/briefs`, () => HttpResponse.json({ items: [] })),
+      http.post(`${API}/fits/yield`, () => HttpResponse.json({ yields: [YIELD.yield] })),
       http.post(`${API}/stages`, async ({ request }) => {
         const input = (await request.json()) as KeepStage;
         kept.push(input);

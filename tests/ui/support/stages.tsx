@@ -2,6 +2,7 @@ import { screen, within } from "@testing-library/react";
 import { HttpResponse, http } from "msw";
 import { type Brief, briefSchema } from "#shared/schemas/brief";
 import type { Stage, UpdateStage } from "#shared/schemas/stage";
+import type { StageYieldResponse } from "#shared/schemas/yield";
 import { StagePage } from "../../../web/features/stages/stage-page";
 import { StagesPage } from "../../../web/features/stages/stages-page";
 import { buildPart } from "../../support/build-part";
@@ -39,11 +40,18 @@ export function buildStage(overrides: Partial<Stage> = {}): Stage {
 
 export const PAGES = { "/stages/:id": <StagePage />, "/stages": <StagesPage /> };
 
+/** What the server says of a stage's builds. */
+export const YIELD: StageYieldResponse = {
+  yield: { fraction: 0.957, low: 0.954, high: 0.96, builds: 20_000 },
+  costliest: { parameter: "vt", fraction: 0.998 },
+};
+
 /** Plays one kept stage; answers each save with the next version. */
 export function playStage(stage = buildStage()): UpdateStage[] {
   const saved: UpdateStage[] = [];
   server.use(
     http.get(`${API}/stages/4`, () => HttpResponse.json(stage)),
+    http.post(`${API}/stages/4/yield`, () => HttpResponse.json(YIELD)),
     http.put(`${API}/stages/4`, async ({ request }) => {
       const change = (await request.json()) as UpdateStage;
       saved.push(change);

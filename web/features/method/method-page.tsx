@@ -15,12 +15,14 @@ import { FREQUENCY, RATINGS } from "./sections/ratings";
 import { SIGNAL } from "./sections/signal";
 import { SPREAD } from "./sections/spread";
 import { SWING } from "./sections/swing";
+import { WHY } from "./sections/why";
 
 const SECTIONS: readonly MethodSection[] = [
   DEVICE,
   Q_POINT,
   SWING,
   SPREAD,
+  WHY,
   SIGNAL,
   FREQUENCY,
   RATINGS,

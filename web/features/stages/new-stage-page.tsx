@@ -79,7 +79,13 @@ function FitSheet({ fit, part }: { fit: LinkedFit; part: Part }) {
           </>
         }
       />
-      <StageSheetView part={part} brief={fit.brief} resistors={fit.resistors} onChange={step} />
+      <StageSheetView
+        stageId={null}
+        part={part}
+        brief={fit.brief}
+        resistors={fit.resistors}
+        onChange={step}
+      />
     </>
   );
 }

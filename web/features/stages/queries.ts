@@ -1,7 +1,14 @@
 import { queryOptions, useMutation, useQueryClient } from "@tanstack/react-query";
 import type { z } from "zod";
+import type { Brief } from "#shared/schemas/brief";
+import type { Resistors } from "#shared/schemas/circuit";
 import { partSchema } from "#shared/schemas/part";
 import { type keepStageSchema, type Stage, stageSchema, type UpdateStage } from "#shared/schemas/stage";
+import {
+  fitYieldsResponseSchema,
+  type StageYieldResponse,
+  stageYieldResponseSchema,
+} from "#shared/schemas/yield";
 import { callApi } from "../../lib/api";
 import { stagesQuery } from "../../lib/lists";
 
@@ -21,6 +28,45 @@ export const partQuery = (id: number) =>
   queryOptions({
     queryKey: ["parts", id],
     queryFn: ({ signal }) => callApi(`/parts/${id}`, { schema: partSchema, signal }),
+  });
+
+const YIELD_BUILDS = 20_000;
+
+/** The yield of a kept stage, or of a fit that isn't kept, with the values as they are tried. */
+export const yieldQuery = ({
+  stageId,
+  partId,
+  brief,
+  resistors,
+}: {
+  stageId: number | null;
+  partId: number;
+  brief: Brief;
+  resistors: Resistors;
+}) =>
+  queryOptions({
+    queryKey: ["stage-yield", stageId, partId, brief, resistors],
+    // The same builds every time, so the answer never changes.
+    staleTime: Number.POSITIVE_INFINITY,
+    queryFn: async ({ signal }): Promise<StageYieldResponse> => {
+      if (stageId !== null) {
+        const body = { resistors, builds: YIELD_BUILDS };
+        return callApi(`/stages/${stageId}/yield`, {
+          method: "POST",
+          body,
+          schema: stageYieldResponseSchema,
+          signal,
+        });
+      }
+      const body = { brief, fits: [{ partId, resistors }], builds: YIELD_BUILDS };
+      const { yields } = await callApi("/fits/yield", {
+        method: "POST",
+        body,
+        schema: fitYieldsResponseSchema,
+        signal,
+      });
+      return { yield: yields[0], costliest: null };
+    },
   });
 
 /** Takes a stage that the server answered with into the cache. */

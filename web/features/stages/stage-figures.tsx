@@ -1,5 +1,6 @@
 import type { ReactNode } from "react";
 import { Link } from "react-router-dom";
+import { circuitOf } from "#shared/bias/circuits/registry";
 import { distortionPeak, type StageSheet } from "#shared/bias/stage-sheet";
 import type { Brief } from "#shared/schemas/brief";
 import { formatQuantity } from "#shared/values/engineering";
@@ -29,9 +30,15 @@ function Figure({ name, anchor, children }: { name: ReactNode; anchor: string; c
 }
 
 function Operating({ sheet }: { sheet: StageSheet }) {
-  const { bias, nodes } = sheet;
+  const { bias, nodes, values } = sheet;
+  const { output } = circuitOf(values.circuit).signalNodes(values);
   return (
     <Facts>
+      {values.vss > 0 && (
+        <Figure name="Negative rail" anchor="circuit-negative-rail">
+          <Value number={-values.vss} unit="V" exact />
+        </Figure>
+      )}
       <Figure name="Gate voltage" anchor="gate-voltage">
         <Value number={bias.vg} unit="V" />
       </Figure>
@@ -47,7 +54,10 @@ function Operating({ sheet }: { sheet: StageSheet }) {
       <Figure name="Drain-source voltage" anchor="drain-source-voltage">
         <Value number={bias.vds} unit="V" />
       </Figure>
-      <Figure name="Drain, source to ground" anchor="q-point">
+      <Figure
+        name={output === "drain" ? "Drain (output), source to ground" : "Drain, source (output) to ground"}
+        anchor="q-point"
+      >
         <Value number={nodes.drain} unit="V" />, <Value number={nodes.source} unit="V" />
       </Figure>
       <Figure name="Supply current" anchor="supply-current">

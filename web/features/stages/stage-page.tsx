@@ -98,6 +98,7 @@ function KeptStage({ stage }: { stage: Stage }) {
         }
       />
       <StageSheetView
+        stageId={stage.id}
         part={stage.part}
         brief={stage.brief}
         resistors={resistors}

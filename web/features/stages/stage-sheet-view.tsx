@@ -11,11 +11,16 @@ import { LoadLineFigure } from "../../figures/load-line-figure";
 import { LoadLineTable } from "../../figures/load-line-table";
 import { CautionBlock, MarginNote } from "../../ui/margin-note";
 import { Slider } from "../../ui/slider";
+import { AssuredBlock } from "./assured-block";
 import { missedConditions } from "./missed-conditions";
 import { ResistorSteppers } from "./resistor-steppers";
 import { StageFigures } from "./stage-figures";
+import { StageYield } from "./stage-yield";
+import { WhyBlock } from "./why-block";
 
 type StageSheetViewProps = {
+  /** The kept stage; null for a fit that isn't kept. */
+  stageId: number | null;
   part: Part;
   brief: Brief;
   resistors: Resistors;
@@ -33,7 +38,7 @@ const ROOM_TEMPERATURE = 25;
 
 /** A stage on its load line, with every figure; each follows the values at once, worked out here. */
 export function StageSheetView(props: StageSheetViewProps) {
-  const { part, brief, resistors, onChange, underResistors, underFigure } = props;
+  const { stageId, part, brief, resistors, onChange, underResistors, underFigure } = props;
   const [celsius, setCelsius] = useState(() => clamp(ROOM_TEMPERATURE, brief.ambient.min, brief.ambient.max));
   const sheet = useMemo(
     () => describeStage(part, brief, resistors, celsius),
@@ -54,13 +59,15 @@ export function StageSheetView(props: StageSheetViewProps) {
               size="sheet"
               towardOhmic={sheet.bias.swing.towardOhmic}
               towardCutoff={sheet.bias.swing.towardCutoff}
-              assured={null}
+              assured={sheet.assured.swing}
               scale={Math.max(sheet.bias.swing.towardOhmic, sheet.bias.swing.towardCutoff)}
             />
           )}
           <p aria-live="polite" className="mt-1 leading-6.5">
             <Verdict sheet={sheet} />
           </p>
+          <AssuredBlock sheet={sheet} />
+          <StageYield stageId={stageId} partId={part.id} brief={brief} resistors={resistors} />
         </div>
         {missed.length > 0 && (
           <div className="flex flex-col gap-3">
@@ -99,6 +106,7 @@ export function StageSheetView(props: StageSheetViewProps) {
           )}
           <StageFigures sheet={sheet} brief={brief} />
         </section>
+        <WhyBlock part={part} brief={brief} resistors={resistors} onChange={onChange} />
       </div>
       <div className="flex min-w-0 flex-col gap-7">
         <section aria-label="Cautions" className="grid items-start gap-3 xl:grid-cols-2">
