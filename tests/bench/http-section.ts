@@ -5,10 +5,10 @@ import type { BriefInput } from "#shared/schemas/brief";
 import type { LoopObjective } from "./loops";
 import { median, percentile, type Report } from "./report";
 
-const WARM_UP = 30;
+const WARM_UP = 20;
 const CLIENTS = 8;
 const REQUESTS_OF_ONE = 150;
-const REQUESTS_OF_EIGHT = 320;
+const REQUESTS_OF_EIGHT = 160;
 const OVERHEAD_BAR = 1.5;
 
 /** The server to measure: started by the bench's script on a database of its own. */

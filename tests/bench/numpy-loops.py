@@ -278,7 +278,7 @@ def measure(rate, prepare, seconds):
     tried = [(rate(*prepare(chunk)), chunk) for chunk in CHUNKS]
     prepared = prepare(max(tried)[1])
     rates = []
-    while len(rates) < 7 or (len(rates) < 21 and time.perf_counter() < until):
+    while len(rates) < 5 or (len(rates) < 21 and time.perf_counter() < until):
         rates.append(rate(*prepared))
     return rates
 
