@@ -32,7 +32,7 @@ export const SPREAD: MethodSection = {
       words:
         "The share of simulated builds that meet every condition of the brief: swing, gain, input resistance, supply current, source drop, high corner, distortion, and the derated ratings at the build's own temperature. `V_T` and `K` are drawn from a normal distribution around the middle of their range whose 3 sigma are its ends, cut off there; with a lot attached, from the lot's own readings in pairs. Resistors, rails and ambient temperature are drawn evenly from their ranges. The same seed draws the same builds.",
       source:
-        "Monte Carlo simulation; xoshiro128** (D. Blackman and S. Vigna, ACM Transactions on Mathematical Software 47, 2021) and Marsaglia's polar method (SIAM Review 6, 1964).",
+        "Monte Carlo simulation; xoshiro128** (D. Blackman and S. Vigna, ACM Transactions on Mathematical Software 47, 2021) and the ziggurat (G. Marsaglia and W. W. Tsang, Journal of Statistical Software 5, 2000).",
       limits:
         "Parts of one delivery are more alike than the datasheet's range, and lots differ: a yield speaks for the distribution stated, not for a batch. `V_T` and `K` are drawn apart from each other unless a lot says how they go together.",
     },
