@@ -1,84 +1,64 @@
-import { distortionPeak, type StageSheet } from "#shared/bias/stage-sheet";
-import { type Condition, type Margin, requiredMargins } from "#shared/bias/why/margins";
+import type { Margin } from "#shared/bias/why/margins";
+import { wayToSaturation } from "#shared/bias/why/way-to-saturation";
+import type { Region } from "#shared/schemas/bias";
 import type { Brief } from "#shared/schemas/brief";
+import type { ResistorKey, Resistors } from "#shared/schemas/circuit";
 import type { Part } from "#shared/schemas/part";
-import { formatPercent, formatQuantity } from "#shared/values/engineering";
-import type { Unit } from "#shared/values/units";
+import { formatQuantity } from "#shared/values/engineering";
+import { actualInWords, nameOfCondition, statedInWords } from "./condition-words";
 
-const exact = { exact: true } as const;
-
-/** What each condition is called in a sentence. */
-export const CONDITION_WORDS: Record<Condition, string> = {
-  swing: "swing",
-  "assured-swing": "assured swing",
-  gain: "gain",
-  "input-resistance": "input resistance",
-  "supply-current": "supply current",
-  "source-drop": "drop across RS",
-  "high-corner": "high corner",
-  distortion: "second harmonic",
-  "rail-rating": "rail against the drain-source rating",
-  "power-rating": "dissipation",
-};
-
-/** What each condition is measured in. */
-export const CONDITION_UNITS: Record<Condition, Unit> = {
-  swing: "V",
-  "assured-swing": "V",
-  gain: "",
-  "input-resistance": "Ω",
-  "supply-current": "A",
-  "source-drop": "V",
-  "high-corner": "Hz",
-  distortion: "%",
-  "rail-rating": "V",
-  "power-rating": "W",
+type Judged = {
+  part: Part;
+  brief: Brief;
+  resistors: Resistors;
+  /** Of the typical device at the temperature of the conditions. */
+  region: Region;
+  margins: readonly Margin[];
 };
 
 /** Which of its brief's conditions a stage misses with the values it has now, each in words with both figures. */
-export function missedConditions(part: Part, brief: Brief, sheet: StageSheet): string[] {
-  const { bias } = sheet;
-  if (bias.region === "cutoff") return [OFF_ADVICE[brief.circuit]];
-  if (bias.region === "ohmic") {
-    return [`The device is in the ohmic region and can't swing. ${ohmicAdvice(brief, sheet)}`];
-  }
-  return requiredMargins(part, brief, sheet)
-    .filter(({ margin }) => margin < 0)
+export function missedConditions({ part, brief, resistors, region, margins }: Judged): string[] {
+  if (region !== "saturation") return [outOfSaturation(part, brief, resistors, region)];
+  return margins
+    .filter(({ required, margin }) => required && margin < 0)
     .map((margin) => missedInWords(part, brief, margin));
 }
 
-function missedInWords(part: Part, brief: Brief, { condition, bound, stated, actual }: Margin): string {
-  const unit = CONDITION_UNITS[condition];
-  const allowed = formatQuantity(stated, unit, exact);
-  if (condition === "distortion") {
-    const peak = formatQuantity(distortionPeak(brief), "V", exact);
-    return `The second harmonic at ${peak} peak is ${formatPercent(actual, 2)}, above the ${allowed} allowed.`;
+function missedInWords(part: Part, brief: Brief, margin: Margin): string {
+  if (margin.condition === "rail-rating") {
+    const share = formatQuantity(brief.derating.vds, "%", { exact: true });
+    return `The supply is above ${share} of the ${formatQuantity(part.vdss, "V", { exact: true })} drain-source rating.`;
   }
-  if (condition === "rail-rating") {
-    const share = formatQuantity(brief.derating.vds, "%", exact);
-    return `The rail is above ${share} of the ${formatQuantity(part.vdss, "V", exact)} drain-source rating.`;
-  }
-  const missed = bound === "least" ? `below the ${allowed} asked for` : `above the ${allowed} allowed`;
-  return `The ${CONDITION_WORDS[condition]} is ${formatQuantity(actual, unit)}, ${missed}.`;
+  const is = `The ${nameOfCondition(margin.condition, brief)} is ${actualInWords(margin)}`;
+  return margin.bound === "least"
+    ? `${is}, below the ${statedInWords(margin)} asked for.`
+    : `${is}, above the ${statedInWords(margin)} allowed.`;
 }
 
-const DIVIDED_OFF = "The gate sits below the threshold: the device is off. Raise R2 or lower R1.";
+/** Says that a stage is off or ohmic, and which resistors bring it back. */
+function outOfSaturation(part: Part, brief: Brief, resistors: Resistors, region: Region): string {
+  const { lower, raise } = wayToSaturation(part, brief, resistors);
+  if (region === "ohmic") {
+    const way = [inWords("lower", lower), inWords("raise", raise)];
+    return `The device is in the ohmic region and can't swing. ${asSentence(way, lower, raise)}`;
+  }
+  const off = "The gate sits below the threshold: the device is off.";
+  if (lower.length + raise.length === 0) {
+    const rail = brief.circuit === "negative-rail" ? "negative rail" : "rail";
+    return `${off} No resistor turns it on: raise the ${rail}, or take a part with a lower threshold.`;
+  }
+  return `${off} ${asSentence([inWords("raise", raise), inWords("lower", lower)], lower, raise)}`;
+}
 
-const OFF_ADVICE: Record<Brief["circuit"], string> = {
-  "four-resistor": DIVIDED_OFF,
-  "split-source": DIVIDED_OFF,
-  follower: DIVIDED_OFF,
-  "drain-feedback": "The gate sits below the threshold: the device is off. Raise R2 or lower RG.",
-  "negative-rail":
-    "The negative rail is below the threshold: the device is off. It takes a part with a lower threshold.",
-};
+const orList = new Intl.ListFormat("en", { type: "disjunction" });
 
-/** What takes the drain current down, and so lifts the drain. */
-function ohmicAdvice({ circuit }: Brief, { values }: StageSheet): string {
-  if (circuit === "negative-rail") return "Lower RD, or raise RS.";
-  // A source resistor that isn't there can't be stepped.
-  const source = values.rs > 0 ? " or RS" : "";
-  if (circuit === "follower") return `Lower R2, or raise R1${source}.`;
-  const top = circuit === "drain-feedback" ? "RG" : "R1";
-  return `Lower R2 or RD, or raise ${top}${source}.`;
+function inWords(verb: string, keys: readonly ResistorKey[]): string | null {
+  return keys.length > 0 ? `${verb} ${orList.format(keys.map((key) => key.toUpperCase()))}` : null;
+}
+
+/** "Raise R2 or lower R1."; a comma where the parts have an "or" of their own. */
+function asSentence(parts: (string | null)[], ...lists: (readonly ResistorKey[])[]): string {
+  const joint = lists.some((keys) => keys.length > 1) ? ", or " : " or ";
+  const words = parts.filter((part) => part !== null).join(joint);
+  return `${words.charAt(0).toUpperCase()}${words.slice(1)}.`;
 }

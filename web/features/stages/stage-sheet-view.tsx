@@ -106,7 +106,6 @@ export function StageSheetView(props: StageSheetViewProps) {
           )}
           <StageFigures sheet={sheet} brief={brief} />
         </section>
-        <WhyBlock part={part} brief={brief} resistors={resistors} onChange={onChange} />
       </div>
       <div className="flex min-w-0 flex-col gap-7">
         <section aria-label="Cautions" className="grid items-start gap-3 xl:grid-cols-2">
@@ -114,6 +113,7 @@ export function StageSheetView(props: StageSheetViewProps) {
             <CautionBlock key={code}>{message}</CautionBlock>
           ))}
         </section>
+        <WhyBlock part={part} brief={brief} resistors={resistors} onChange={onChange} />
         {underFigure}
       </div>
     </div>

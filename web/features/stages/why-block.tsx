@@ -37,41 +37,43 @@ export function WhyBlock({ part, brief, resistors, onChange }: WhyBlockProps) {
         {binding.bound === "least" ? "at least " : "at most "}
         <span className="value">{formatQuantity(binding.stated, unit)}</span>.
       </p>
-      <Margins margins={margins} />
-      {sensitivities.length > 0 && (
-        <table className="mt-3 w-full text-sm">
-          <caption className="pb-1 text-left text-quiet text-xs">
-            <Link
-              to="/method#sensitivity"
-              className="hover:text-ink hover:underline hover:underline-offset-3"
-            >
-              For one per cent more of each
-            </Link>
-          </caption>
-          <thead>
-            <tr className="border-rule border-b text-quiet text-xs">
-              <th className="py-0.5 text-left font-normal">component</th>
-              <th className="py-0.5 text-right font-normal">swing</th>
-              <th className="py-0.5 text-right font-normal">off centre</th>
-            </tr>
-          </thead>
-          <tbody>
-            {sensitivities.map(({ component, swing, centring }) => (
-              <tr key={component} className="border-rule border-b">
-                <th scope="row" className="py-0.5 text-left font-normal">
-                  {COMPONENT_NAMES[component]}
-                </th>
-                <td className="value py-0.5 text-right">
-                  {signed(swing, (size) => formatQuantity(size, "V"))}
-                </td>
-                <td className="value py-0.5 text-right">
-                  {signed(centring, (size) => formatPercent(size, 2))}
-                </td>
+      <div className="grid items-start gap-x-10 gap-y-4 xl:grid-cols-2 print:grid-cols-2">
+        <Margins margins={margins} />
+        {sensitivities.length > 0 && (
+          <table className="w-full text-sm">
+            <caption className="pb-1 text-left text-quiet text-xs">
+              <Link
+                to="/method#sensitivity"
+                className="hover:text-ink hover:underline hover:underline-offset-3"
+              >
+                For one per cent more of each
+              </Link>
+            </caption>
+            <thead>
+              <tr className="border-rule border-b text-quiet text-xs">
+                <th className="py-0.5 text-left font-normal">component</th>
+                <th className="py-0.5 text-right font-normal">swing</th>
+                <th className="py-0.5 text-right font-normal">off centre</th>
               </tr>
-            ))}
-          </tbody>
-        </table>
-      )}
+            </thead>
+            <tbody>
+              {sensitivities.map(({ component, swing, centring }) => (
+                <tr key={component} className="border-rule border-b">
+                  <th scope="row" className="py-0.5 text-left font-normal">
+                    {COMPONENT_NAMES[component]}
+                  </th>
+                  <td className="value py-0.5 text-right">
+                    {signed(swing, (size) => formatQuantity(size, "V"))}
+                  </td>
+                  <td className="value py-0.5 text-right">
+                    {signed(centring, (size) => formatPercent(size, 2))}
+                  </td>
+                </tr>
+              ))}
+            </tbody>
+          </table>
+        )}
+      </div>
       {better.length > 0 && (
         <div data-no-print="" className="mt-3 text-sm">
           <h3 className="pb-1 text-quiet text-xs">
