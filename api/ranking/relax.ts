@@ -167,6 +167,13 @@ const FILTERS: readonly Filter[] = [
     off: (brief) => ({ ...brief, parts: { ...brief.parts, maxUnitPrice: undefined } }),
     message: "Drop the price limit",
   },
+  {
+    condition: "source-drop",
+    path: "sourceDrop.min",
+    isOn: ({ sourceResistor, sourceDrop }) => sourceResistor === "none" && sourceDrop.min !== undefined,
+    off: (brief) => ({ ...brief, sourceDrop: {} }),
+    message: "Ask for no drop across RS, as the stage has none",
+  },
 ];
 
 /** How close the needed value is brought to the true one: 12 halvings on a logarithmic scale. */
