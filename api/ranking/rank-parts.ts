@@ -37,6 +37,8 @@ export type Ranking = {
 /** Tasks a thread: enough for progress and for cancelling soon, few enough that the passing costs nothing. */
 const TASKS_PER_THREAD = 8;
 const MOST_PARTS_A_TASK = 128;
+/** Until the answer's last place is taken there is no bar, so the threads take turns in small tasks to set it soon. */
+const PARTS_A_TASK_WITHOUT_BAR = 8;
 
 /**
  * Ranks every part × resistor combination of a brief, exactly, on the worker threads.
@@ -114,7 +116,7 @@ function startSearch(problem: Problem, parts: Part[], buildQuantity: number, con
     const nextTask = (): RankingTask | null => {
       if (next >= total) return null;
       const from = next;
-      next = Math.min(total, from + size);
+      next = Math.min(total, from + (best.threshold ? size : Math.min(size, PARTS_A_TASK_WITHOUT_BAR)));
       return { ...shared, mode, limit, bar: best.threshold, rows: rows.slice(from, next) };
     };
     try {

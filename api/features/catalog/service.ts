@@ -4,12 +4,19 @@ import { countChange, selectVersion } from "./queries";
 
 type Kept = { version: string; value: Promise<unknown> };
 
+const MOST_KINDS = 200;
+
 /** What was read, by database, team and kind; one version of each. */
 const kept = new WeakMap<Database, Map<string, Kept>>();
 
+/** The version that each request has seen, so that all it reads is of one. */
+const seen = new WeakMap<SignedInContext, Promise<string>>();
+
 /** The version of all that the actor's team can choose from; it changes with every write to it. */
-export function catalogVersion({ db, actor }: SignedInContext): Promise<string> {
-  return selectVersion(db, actor.team.id);
+export function catalogVersion(context: SignedInContext): Promise<string> {
+  const version = seen.get(context) ?? selectVersion(context.db, context.actor.team.id);
+  seen.set(context, version);
+  return version;
 }
 
 /**
@@ -31,6 +38,7 @@ export async function readKept<T>(
   const found = ofDatabase.get(key);
   if (found?.version === version) return found.value as Promise<T>;
   const value = read();
+  if (ofDatabase.size >= MOST_KINDS) ofDatabase.delete(ofDatabase.keys().next().value as string);
   ofDatabase.set(key, { version, value });
   // What could not be read is not kept.
   value.catch(() => ofDatabase.delete(key));

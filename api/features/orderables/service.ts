@@ -11,7 +11,13 @@ const SMALLEST_USUAL_RATING = 0.1;
 const TOLERANCE_SLACK = 1e-9;
 
 /** What resistors a brief can count on: the largest rating at its tolerance, the values in stock, and the prices. */
-export async function resistorSupply(context: SignedInContext, brief: Brief): Promise<ResistorSupply> {
+export function resistorSupply(context: SignedInContext, brief: Brief): Promise<ResistorSupply> {
+  const { tolerance, stockedOnly } = brief.resistors;
+  const kind = `resistors at ${tolerance}, ${stockedOnly ? "in stock" : "all"}, for ${brief.buildQuantity}`;
+  return readKept(context, kind, () => readSupply(context, brief));
+}
+
+async function readSupply(context: SignedInContext, brief: Brief): Promise<ResistorSupply> {
   const { tolerance, stockedOnly } = brief.resistors;
   const all = await readKept(context, "resistors", () => selectResistors(context.db));
   const within = all.filter((row) => row.tolerance <= tolerance + TOLERANCE_SLACK);
