@@ -18,28 +18,30 @@ type Draw = () => number;
 
 describe(`every build inside the spread has the assured swing (seed ${SEED})`, () => {
   const random = seededRandom(SEED + 20);
-  const stages = drawStages(random, STAGES, [1.6, 8]).map((drawn) => ({
-    ...drawn,
-    box: boxAround(random, drawn),
+  const drawn = drawStages(random, 3 * STAGES, [1.6, 8]).map((stage) => ({
+    ...stage,
+    box: boxAround(random, stage),
   }));
-  const circuits = [...new Set(stages.map(({ stage }) => stage.circuit))];
+  const circuits = [...new Set(drawn.map(({ stage }) => stage.circuit))];
 
   it.each(circuits)("of a %s stage", (circuit) => {
-    const worst: { name: string; assured: Swing; least: Swing }[] = [];
-    for (const { name, stage, box } of stages) {
-      if (stage.circuit !== circuit) continue;
-      const { swing: assured } = assuredSwing(box);
+    // A stage of which some build has no swing promises nothing.
+    const promising = drawn.filter(
+      ({ stage, box }) => stage.circuit === circuit && assuredSwing(box).swing.symmetric > 0,
+    );
+    expect(promising.length).toBeGreaterThanOrEqual(STAGES);
+    const stages = promising.filter((_, at) => (at * STAGES) % promising.length < STAGES);
+    let reached = 0;
+    for (const { name, box } of stages) {
+      const assured = assuredSwing(box).swing;
       const least = leastOf(random, box);
-      expect(least.symmetric, name).toBeGreaterThanOrEqual(assured.symmetric * (1 - 1e-9));
-      if (assured.symmetric === 0) continue;
-      expect(least.towardCutoff, name).toBeGreaterThanOrEqual(assured.towardCutoff * (1 - 1e-9));
-      expect(least.towardOhmic, name).toBeGreaterThanOrEqual(assured.towardOhmic * (1 - 1e-9));
-      worst.push({ name, assured, least });
+      for (const side of ["symmetric", "towardCutoff", "towardOhmic"] as const) {
+        expect(least[side], `${name}: ${side}`).toBeGreaterThanOrEqual(assured[side] * (1 - 1e-9));
+      }
+      if (least.symmetric < 1.03 * assured.symmetric) reached++;
     }
     // A bound that is never reached would be safe and useless.
-    expect(worst.length).toBeGreaterThan(0.5 * STAGES);
-    const reached = worst.filter(({ assured, least }) => least.symmetric < 1.03 * assured.symmetric);
-    expect(reached.length).toBeGreaterThanOrEqual(0.9 * worst.length);
+    expect(reached).toBeGreaterThanOrEqual(0.9 * STAGES);
   });
 });
 
@@ -87,16 +89,14 @@ function boxAround(random: Random, { device, stage }: ReturnType<typeof drawStag
 function leastOf(random: Random, box: Box): Swing {
   const anywhere: Draw = () => random.between(-1, 1);
   const end: Draw = () => (random.chance(0.5) ? 1 : -1);
-  const nearEnd: Draw = () => end() * (1 - random.between(0, 1) ** 4);
   const least = {
     towardCutoff: Number.POSITIVE_INFINITY,
     towardOhmic: Number.POSITIVE_INFINITY,
     symmetric: Number.POSITIVE_INFINITY,
   };
   for (let build = 0; build < BUILDS; build++) {
-    // Half of the builds anywhere; the rest where the least is expected, any temperature with them.
-    const draw = build % 2 === 0 ? anywhere : build % 4 === 1 ? end : nearEnd;
-    const swing = swingOfBuild(box, draw, anywhere);
+    // Half of the builds anywhere; the rest at corners, at an end of the ambient range or anywhere in it.
+    const swing = swingOfBuild(box, build % 2 === 0 ? anywhere : end, build % 4 === 1 ? end : anywhere);
     least.towardCutoff = Math.min(least.towardCutoff, swing.towardCutoff);
     least.towardOhmic = Math.min(least.towardOhmic, swing.towardOhmic);
     least.symmetric = Math.min(least.symmetric, swing.symmetric);
