@@ -44,19 +44,6 @@ export function transitionVoltage(k: number, lambda: number, intercept: number, 
   return v;
 }
 
-/**
- * The room each way from the Q-point, as peak volts at the output.
- *
- * @param q the Q-point's drain current, A
- * @param transition the transition point's drain current, A
- * @param load the a.c. load rL at the output, ohms
- */
-export function swingOf(q: number, transition: number, load: number): Swing {
-  const towardCutoff = q * load;
-  const towardOhmic = (transition - q) * load;
-  return { towardCutoff, towardOhmic, symmetric: Math.min(towardCutoff, towardOhmic) };
-}
-
 /** How far off centre a Q-point is: |U - D|/(U + D), 0 at dead centre, 1 at an edge. */
 export function centringErrorOf(swing: Swing): number {
   const { towardCutoff, towardOhmic } = swing;

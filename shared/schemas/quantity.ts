@@ -14,11 +14,6 @@ export const ohms = finite("A resistance")
   .min(LIMITS.resistor.min, "Resistors go from 0.1 Ω to 100 MΩ")
   .max(LIMITS.resistor.max, "Resistors go from 0.1 Ω to 100 MΩ");
 
-/** A source resistor in ohms: 0 stands for a wire. */
-export const sourceOhms = z.union([z.literal(0), ohms], {
-  error: "The source resistor is 0 (a wire) or 0.1 Ω to 100 MΩ",
-});
-
 /** A load in ohms; null stands for no load. */
 export const loadOhms = ohms.nullable();
 

@@ -1,5 +1,5 @@
-import type { Response } from "express";
 import { type FitsEvent, fitsRequestSchema, fitsResponseSchema } from "#shared/schemas/fits";
+import { abortWhenClosed } from "../../http/abort-when-closed";
 import { route } from "../../http/route";
 import { findFits } from "./service";
 
@@ -39,15 +39,3 @@ export const fitRoutes = [
     },
   }),
 ];
-
-/** Nobody waits for an answer whose connection is gone. */
-function abortWhenClosed(response: Response): AbortSignal {
-  const controller = new AbortController();
-  const hangUp = () => {
-    if (!response.writableFinished) controller.abort();
-  };
-  // The caller may have gone while the session was looked up, and that is told only once.
-  if (response.closed) hangUp();
-  else response.once("close", hangUp);
-  return controller.signal;
-}
