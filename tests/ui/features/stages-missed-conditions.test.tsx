@@ -1,5 +1,6 @@
 import { describe, expect, it } from "vitest";
 import { describeStage } from "#shared/bias/stage-sheet";
+import { marginsOf } from "#shared/bias/why/margins";
 import { type Brief, type BriefInput, briefSchema } from "#shared/schemas/brief";
 import type { Resistors } from "#shared/schemas/circuit";
 import type { Part } from "#shared/schemas/part";
@@ -14,7 +15,7 @@ function briefWith(conditions: Partial<BriefInput> = {}): Brief {
 }
 
 function missed(brief: Brief, { part = buildPart(), resistors = RESISTORS } = {}): string[] {
-  return missedConditions(part, brief, describeStage(part, brief, resistors));
+  return missedConditions(part, brief, resistors, marginsOf(part, brief, resistors));
 }
 
 // The stage sits at 1.62 mA and 5.70 V with 1.94 V across RS; R1 and R2 in parallel are 529 kΩ.
@@ -54,7 +55,7 @@ describe("the conditions that a stage misses", () => {
 
   it("name the drain-source rating that the rail goes past", () => {
     expect(missed(briefWith(), { part: buildPart({ vdss: 14 }) })).toEqual([
-      "The rail is above 80 % of the 14 V drain-source rating.",
+      "The supply is above 80 % of the 14 V drain-source rating.",
     ]);
   });
 
@@ -62,6 +63,19 @@ describe("the conditions that a stage misses", () => {
     const [words, ...others] = missed(briefWith(), { part: buildPart({ pd25: 0.01 }) });
     expect(words).toMatch(/^The dissipation is 9\.2\d mW, above the 5 mW allowed\.$/);
     expect(others).toEqual([]);
+  });
+
+  it("stand in the order of what is missed by most", () => {
+    const [first, second, ...others] = missed(briefWith({ swing: { peak: 5 }, sourceDrop: { min: 20 } }));
+    expect([first, second]).toEqual([
+      expect.stringMatching(/^The drop across RS/),
+      expect.stringMatching(/^The swing/),
+    ]);
+    expect(others).toEqual([]);
+  });
+
+  it("never are the assured swing alone: the swing is asked of the typical device", () => {
+    expect(missed(briefWith({ swing: { peak: 3 }, ambient: { min: -10, max: 50 } }))).toEqual([]);
   });
 
   it("are one where the device is off, and say how to turn it on", () => {

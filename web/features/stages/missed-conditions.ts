@@ -1,3 +1,4 @@
+import { figureStage } from "#shared/bias/stage-sheet";
 import type { Margin } from "#shared/bias/why/margins";
 import { wayToSaturation } from "#shared/bias/why/way-to-saturation";
 import type { Region } from "#shared/schemas/bias";
@@ -7,17 +8,18 @@ import type { Part } from "#shared/schemas/part";
 import { formatQuantity } from "#shared/values/engineering";
 import { actualInWords, nameOfCondition, statedInWords } from "./condition-words";
 
-type Judged = {
-  part: Part;
-  brief: Brief;
-  resistors: Resistors;
-  /** Of the typical device at the temperature of the conditions. */
-  region: Region;
-  margins: readonly Margin[];
-};
-
-/** Which of its brief's conditions a stage misses with the values it has now, each in words with both figures. */
-export function missedConditions({ part, brief, resistors, region, margins }: Judged): string[] {
+/**
+ * Which of its brief's conditions a stage misses with the values it has now, each in words with both figures.
+ *
+ * @param margins those of the stage
+ */
+export function missedConditions(
+  part: Part,
+  brief: Brief,
+  resistors: Resistors,
+  margins: readonly Margin[],
+): string[] {
+  const { region } = figureStage(part, brief, resistors).bias;
   if (region !== "saturation") return [outOfSaturation(part, brief, resistors, region)];
   return margins
     .filter(({ required, margin }) => required && margin < 0)

@@ -1,20 +1,21 @@
 import { type ReactNode, useMemo, useState } from "react";
 import { loadLineFigure } from "#shared/bias/figure";
-import { describeStage, distortionPeak, type StageSheet } from "#shared/bias/stage-sheet";
+import { describeStage, distortionPeak, negativeRail, type StageSheet } from "#shared/bias/stage-sheet";
+import { marginsOf } from "#shared/bias/why/margins";
 import { cautionsFor } from "#shared/cautions";
 import type { Brief } from "#shared/schemas/brief";
 import type { Resistors } from "#shared/schemas/circuit";
 import type { Part } from "#shared/schemas/part";
-import { formatPercent, formatQuantity } from "#shared/values/engineering";
+import { formatQuantity } from "#shared/values/engineering";
 import { BalanceBar } from "../../figures/balance-bar";
 import { LoadLineFigure } from "../../figures/load-line-figure";
 import { LoadLineTable } from "../../figures/load-line-table";
 import { CautionBlock, MarginNote } from "../../ui/margin-note";
 import { Slider } from "../../ui/slider";
-import { AssuredBlock } from "./assured-block";
 import { missedConditions } from "./missed-conditions";
 import { ResistorSteppers } from "./resistor-steppers";
 import { StageFigures } from "./stage-figures";
+import { StageVerdict } from "./stage-verdict";
 import { StageYield } from "./stage-yield";
 import { WhyBlock } from "./why-block";
 
@@ -45,7 +46,8 @@ export function StageSheetView(props: StageSheetViewProps) {
     [part, brief, resistors, celsius],
   );
   const cautions = useMemo(() => cautionsFor(part, brief, resistors), [part, brief, resistors]);
-  const missed = missedConditions(part, brief, sheet);
+  const margins = useMemo(() => marginsOf(part, brief, resistors), [part, brief, resistors]);
+  const missed = missedConditions(part, brief, resistors, margins);
   return (
     // On paper the two columns stay, shrunk so that a sheet is one page.
     <div className="mt-6 grid grid-cols-[minmax(0,1fr)] gap-x-14 gap-y-9 lg:grid-cols-[minmax(0,1fr)_25rem] lg:grid-rows-[auto_1fr] print:grid-cols-[minmax(0,1fr)_22rem] print:grid-rows-[auto_1fr] print:gap-x-8 print:[zoom:0.8]">
@@ -64,9 +66,8 @@ export function StageSheetView(props: StageSheetViewProps) {
             />
           )}
           <p aria-live="polite" className="mt-1 leading-6.5">
-            <Verdict sheet={sheet} />
+            <StageVerdict sheet={sheet} brief={brief} part={part} />
           </p>
-          <AssuredBlock sheet={sheet} />
           <StageYield stageId={stageId} partId={part.id} brief={brief} resistors={resistors} />
         </div>
         {missed.length > 0 && (
@@ -113,33 +114,17 @@ export function StageSheetView(props: StageSheetViewProps) {
             <CautionBlock key={code}>{message}</CautionBlock>
           ))}
         </section>
-        <WhyBlock part={part} brief={brief} resistors={resistors} onChange={onChange} />
+        <WhyBlock
+          part={part}
+          brief={brief}
+          resistors={resistors}
+          sheet={sheet}
+          margins={margins}
+          onChange={onChange}
+        />
         {underFigure}
       </div>
     </div>
-  );
-}
-
-/** What the stage does and what limits it, in a sentence. */
-function Verdict({ sheet }: { sheet: StageSheet }) {
-  const { region, swing, centringError } = sheet.bias;
-  if (region === "cutoff") return <>The device is off: it amplifies nothing.</>;
-  if (!swing || centringError === null) {
-    return (
-      <>The device is in the ohmic region (non-saturation): it amplifies little and can't swing evenly.</>
-    );
-  }
-  const limit =
-    centringError < 0.005
-      ? "Neither side runs out first."
-      : swing.towardOhmic < swing.towardCutoff
-        ? "Room toward the ohmic region runs out first."
-        : "Room toward cutoff runs out first.";
-  return (
-    <>
-      <strong>{formatQuantity(swing.symmetric, "V")} peak</strong> both ways,{" "}
-      {formatPercent(centringError, 1)} off centre. {limit}
-    </>
   );
 }
 
@@ -162,7 +147,6 @@ function DrivenFigure({ part, brief, resistors, sheet, celsius }: DrivenFigurePr
     () => loadLineFigure(part, brief, resistors, celsius, outputPeak),
     [part, brief, resistors, celsius, outputPeak],
   );
-  const rail = `${formatQuantity(brief.rail.volts, "V", exact)} ± ${formatQuantity(brief.rail.tolerance, "%", exact)}`;
   return (
     <>
       <LoadLineFigure
@@ -184,8 +168,8 @@ function DrivenFigure({ part, brief, resistors, sheet, celsius }: DrivenFigurePr
         }
         caption={
           <>
-            Hatched: where the Q-point may land for any part inside the datasheet range on a rail of {rail},
-            over resistor tolerance and temperature.{" "}
+            Hatched: where the Q-point may land for any part inside the datasheet range on{" "}
+            {railInWords(brief)}, over resistor tolerance and temperature.{" "}
             <button
               type="button"
               data-no-print=""
@@ -205,6 +189,14 @@ function DrivenFigure({ part, brief, resistors, sheet, celsius }: DrivenFigurePr
       )}
     </>
   );
+}
+
+function railInWords(brief: Brief): string {
+  const tolerance = `± ${formatQuantity(brief.rail.tolerance, "%", exact)}`;
+  const positive = formatQuantity(brief.rail.volts, "V", exact);
+  const negative = negativeRail(brief);
+  if (negative === 0) return `a rail of ${positive} ${tolerance}`;
+  return `rails of ${positive} and ${formatQuantity(-negative, "V", exact)}, each ${tolerance}`;
 }
 
 function clamp(value: number, low: number, high: number): number {

@@ -6,7 +6,9 @@ import type { Resistors } from "#shared/schemas/circuit";
 import type { BuildParameter, StageYieldResponse } from "#shared/schemas/yield";
 import { formatCount, formatPercent } from "#shared/values/engineering";
 import { problemOf } from "../../lib/api";
-import { yieldQuery } from "./queries";
+import { Button } from "../../ui/button";
+import { Fact, Facts } from "../../ui/facts";
+import { YIELD_BUILDS, yieldQuery } from "./queries";
 
 type StageYieldProps = {
   /** The kept stage; null for a fit that isn't kept. */
@@ -19,54 +21,69 @@ type StageYieldProps = {
 /** Stepping on within this time asks for one yield and not for each, ms. */
 const SETTLING_MS = 400;
 
-const PARAMETER_WORDS: Record<BuildParameter, string> = {
-  vt: "the threshold",
-  k: "the conduction parameter",
-  rail: "the rail",
-  resistors: "the resistors",
-  ambient: "the temperature",
-};
-
 /** The share of simulated builds that meet the brief, and what costs the most of them. */
-export function StageYield(props: StageYieldProps) {
-  const resistors = useSettled(props.resistors);
-  const { data, error, isPlaceholderData } = useQuery({
-    ...yieldQuery({ ...props, resistors }),
+export function StageYield({ stageId, partId, brief, resistors }: StageYieldProps) {
+  const settled = useSettled(resistors);
+  const { data, error, isPlaceholderData, refetch, isFetching } = useQuery({
+    ...yieldQuery({ stageId, partId, brief, resistors: settled }),
     placeholderData: keepPreviousData,
   });
-  const isStale = isPlaceholderData || resistors !== props.resistors;
+  const isStale = isPlaceholderData || settled !== resistors;
+  const label = (
+    <Link to="/method#yield" className="hover:text-ink hover:underline hover:underline-offset-3">
+      Yield, {formatCount(YIELD_BUILDS)} builds
+    </Link>
+  );
+  if (error) {
+    return (
+      <Facts>
+        <Fact label={label} note={`${problemOf(error).title}.`}>
+          <Button variant="link" size="small" busy={isFetching} onClick={() => refetch()}>
+            try again
+          </Button>
+        </Fact>
+      </Facts>
+    );
+  }
+  if (!data) {
+    return (
+      <Facts>
+        <Fact label={label}>being simulated…</Fact>
+      </Facts>
+    );
+  }
   return (
-    <p aria-live="polite" className={`mt-2 text-sm leading-5.5 ${isStale ? "text-quiet" : ""}`}>
-      <Link to="/method#yield" className="hover:underline hover:underline-offset-3">
-        Yield
-      </Link>{" "}
-      {error ? (
-        `can't be worked out: ${problemOf(error).title}`
-      ) : data ? (
-        <Yield answer={data} />
-      ) : (
-        "is being simulated…"
-      )}
-      {isStale && data && !error && " (before the last change)"}
-    </p>
+    <div className={isStale ? "text-quiet" : undefined} aria-busy={isStale}>
+      <Facts>
+        <Fact label={label} note={intervalInWords(data)}>
+          {formatPercent(data.yield.fraction)}
+          {isStale && <span className="block font-sans text-xs">before the last step</span>}
+        </Fact>
+      </Facts>
+      <p className="pt-1.5 text-sm">{lossInWords(data)}</p>
+    </div>
   );
 }
 
-function Yield({ answer }: { answer: StageYieldResponse }) {
-  const { fraction, low, high, builds } = answer.yield;
-  const { costliest } = answer;
-  return (
-    <>
-      <strong className="value">{formatPercent(fraction)}</strong> of {formatCount(builds)} simulated builds
-      meet the brief (95 % interval {formatPercent(low)} to {formatPercent(high)}).
-      {costliest &&
-        ` ${capitalised(PARAMETER_WORDS[costliest.parameter])} costs the most: held at its typical value, ${formatPercent(costliest.fraction)} would.`}
-    </>
-  );
+function intervalInWords({ yield: { low, high } }: StageYieldResponse): string {
+  return `95 % interval ${formatPercent(low)} to ${formatPercent(high)}`;
 }
 
-function capitalised(words: string): string {
-  return words[0].toUpperCase() + words.slice(1);
+const PARAMETERS: Record<BuildParameter, { name: string; held: string }> = {
+  vt: { name: "the threshold", held: "its typical value" },
+  k: { name: "the conduction parameter", held: "its typical value" },
+  rail: { name: "the rail", held: "its nominal voltage" },
+  resistors: { name: "the resistors", held: "their nominal values" },
+  ambient: { name: "the ambient temperature", held: "room temperature" },
+};
+
+function lossInWords({ costliest, yield: { fraction } }: StageYieldResponse): string | null {
+  if (!costliest) return null;
+  const { name, held } = PARAMETERS[costliest.parameter];
+  // Where even that leaves most of the loss, no one parameter is to blame for most of it.
+  const isMost = costliest.fraction - fraction > 0.5 * (1 - fraction);
+  const share = isMost ? "Most of the loss comes from" : "The largest part of the loss comes from";
+  return `${share} ${name}: held at ${held}, ${formatPercent(costliest.fraction)} would pass.`;
 }
 
 /** A value once it has stood still for a moment. */
