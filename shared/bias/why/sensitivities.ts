@@ -13,8 +13,6 @@ export type Component = ResistorKey | "rail" | "negativeRail" | "vt" | "k" | "rl
 /** What one per cent more of a component does, at the rate that holds at the stage's own values. */
 export type Sensitivity = {
   component: Component;
-  /** The component's value, SI. */
-  value: number;
   /** Change of the symmetric swing, V, and as a share of it. */
   swing: number;
   swingShare: number;
@@ -46,12 +44,12 @@ export function sensitivitiesOf(part: Part, brief: Brief, resistors: Resistors):
   const stage = stageValues(brief, resistors);
   const rooms = roomsOf(device, stage);
   if (!rooms) return [];
-  return componentsOf(device, stage).flatMap(({ component, value, scaled }) => {
+  return componentsOf(device, stage).flatMap(({ component, scaled }) => {
     const more = roomsOf(...scaled(1 + STEP));
     const less = roomsOf(...scaled(1 - STEP));
     if (!more || !less) return [];
     const slope = (side: keyof Rooms) => (CHANGE * (more[side] - less[side])) / (2 * STEP);
-    return [{ component, value, ...followRooms(rooms, slope("towardCutoff"), slope("towardOhmic")) }];
+    return [{ component, ...followRooms(rooms, slope("towardCutoff"), slope("towardOhmic")) }];
   });
 }
 
@@ -73,19 +71,14 @@ function roomsOf(device: SquareLaw, stage: StageValues): Rooms | null {
 type Scaled = (by: number) => [SquareLaw, StageValues];
 
 /** Every component of a stage, with the stage that it makes when scaled. */
-function componentsOf(
-  device: SquareLaw,
-  stage: StageValues,
-): { component: Component; value: number; scaled: Scaled }[] {
+function componentsOf(device: SquareLaw, stage: StageValues): { component: Component; scaled: Scaled }[] {
   const { vdd, vss, rl } = stage;
   const inStage = (component: Component, key: ResistorKey | "vdd" | "vss" | "rl", value: number) => ({
     component,
-    value,
     scaled: ((by) => [device, { ...stage, [key]: by * value }]) satisfies Scaled,
   });
   const inDevice = (key: "vt" | "k") => ({
     component: key,
-    value: device[key],
     scaled: ((by) => [{ ...device, [key]: by * device[key] }, stage]) satisfies Scaled,
   });
   return [

@@ -92,8 +92,8 @@ describe("a stage's sheet", () => {
     signedInAs("viewer");
     playStage();
     const { user, router } = renderAt("/stages/4", PAGES);
-    const table = await screen.findByRole("table", { name: "One value changed" });
-    const [, first] = within(table).getAllByRole("row");
+    const table = await screen.findByRole("table", { name: "Better with one value changed" });
+    const [, , first] = within(table).getAllByRole("row");
     const [, promised, assured] = within(first)
       .getAllByRole("cell")
       .map((cell) => cell.textContent);
@@ -106,9 +106,9 @@ describe("a stage's sheet", () => {
     expect(router.state.location.search).toMatch(new RegExp(`^\\?${name.toLowerCase()}=\\d+$`));
     expect(screen.getByText(/Changed from what is kept/)).toBeTruthy();
     // What was clicked is gone; the keyboard goes on from there all the same.
-    expect(document.activeElement?.contains(screen.getByRole("table", { name: "One value changed" }))).toBe(
-      true,
-    );
+    expect(
+      document.activeElement?.contains(screen.getByRole("table", { name: "Better with one value changed" })),
+    ).toBe(true);
     expect(document.activeElement).not.toBe(document.body);
   });
 });

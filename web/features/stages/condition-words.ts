@@ -26,7 +26,7 @@ const NAMES: Record<Exclude<Condition, "source-drop" | "distortion">, string> = 
   "input-resistance": "input resistance",
   "supply-current": "supply current",
   "high-corner": "high corner",
-  "rail-rating": "supply across the drain",
+  "rail-rating": "drain-source rating",
   "power-rating": "dissipation",
 };
 

@@ -1,5 +1,5 @@
 import { useMemo } from "react";
-import type { StageSheet } from "#shared/bias/stage-sheet";
+import { figureStage, type StageSheet } from "#shared/bias/stage-sheet";
 import { betterValues } from "#shared/bias/why/better-values";
 import { bindingLimit, type Margin } from "#shared/bias/why/margins";
 import { type Sensitivity, sensitivitiesOf } from "#shared/bias/why/sensitivities";
@@ -7,10 +7,9 @@ import type { Brief } from "#shared/schemas/brief";
 import type { Resistors } from "#shared/schemas/circuit";
 import type { Part } from "#shared/schemas/part";
 import { formatPercent, formatQuantity } from "#shared/values/engineering";
-import { usePreferences } from "../../lib/preferences";
 import { BetterValueTable } from "./better-value-table";
 import { CompactTable } from "./compact-table";
-import { componentValue, nameOfComponent } from "./component-words";
+import { nameOfComponent } from "./component-words";
 import {
   actualInWords,
   marginInWords,
@@ -33,6 +32,7 @@ type WhyBlockProps = {
 export function WhyBlock({ part, brief, resistors, sheet, margins, onChange }: WhyBlockProps) {
   const sensitivities = useMemo(() => sensitivitiesOf(part, brief, resistors), [part, brief, resistors]);
   const better = useMemo(() => betterValues(part, brief, resistors), [part, brief, resistors]);
+  const { centringError } = figureStage(part, brief, resistors).bias;
   return (
     <section aria-labelledby="why-title">
       <h2 id="why-title" className="text-lg">
@@ -45,7 +45,12 @@ export function WhyBlock({ part, brief, resistors, sheet, margins, onChange }: W
         <Margins margins={margins} brief={brief} />
         {sensitivities.length > 0 && <Sensitivities sensitivities={sensitivities} />}
         <EveryBoard sheet={sheet} />
-        <BetterValueTable better={better} resistors={resistors} onChange={onChange} />
+        <BetterValueTable
+          better={better}
+          present={{ centringError, assured: sheet.assured.swing.symmetric }}
+          resistors={resistors}
+          onChange={onChange}
+        />
       </div>
     </section>
   );
@@ -93,23 +98,20 @@ function Margins({ margins, brief }: { margins: readonly Margin[]; brief: Brief 
 }
 
 function Sensitivities({ sensitivities }: { sensitivities: readonly Sensitivity[] }) {
-  const { resistances } = usePreferences();
   return (
     <CompactTable
       title="What +1 % of each does"
       anchor="sensitivity"
       columns={{
         name: "component",
-        value: "now",
         swing: "swing",
         share: <span className="sr-only">swing, per cent</span>,
         centring: "off centre, points",
       }}
-      rows={sensitivities.map(({ component, value, swing, swingShare, centring }) => ({
+      rows={sensitivities.map(({ component, swing, swingShare, centring }) => ({
         id: component,
         cells: {
           name: nameOfComponent(component),
-          value: componentValue(component, value, resistances),
           swing: formatQuantity(swing, "V", { sign: true, digits: 2 }),
           share: signed(formatPercent(swingShare, 2), swingShare),
           centring: signed((100 * centring).toFixed(2).replace("-", "−"), centring),
