@@ -9,7 +9,7 @@ import type { Catalog } from "../catalog";
 import { lineCentsFor } from "../cost";
 import type { Problem } from "../problem";
 import { CONDITIONS, type Condition, type Device, readDevice } from "./conditions";
-import { type Best, bucketOf, nanovolts, PartBest, rankOf } from "./order";
+import { assuredToBeat, type Best, bucketOf, nanovolts, PartBest, rankOf } from "./order";
 import { type PartSpread, partSpread } from "./part-spread";
 import { swingBound } from "./windows";
 
@@ -82,7 +82,7 @@ export class FeedbackSearch {
       kTyp: catalog.k[row],
       kMax: catalog.kMax[row],
     };
-    this.#floor = best instanceof PartBest && best.isOpen && objective !== "cost";
+    this.#floor = best instanceof PartBest && best.bar === null && objective !== "cost";
     if (this.#floor) this.#searchAll(best);
     if (!this.#floor || best.threshold === null) {
       this.#floor = false;
@@ -230,7 +230,7 @@ export class FeedbackSearch {
         ? { level: LEAST_LEVEL, centring: objective === "centred" ? 0.01 : 1, supply: none }
         : { level: 0, centring: 1, supply: none };
     }
-    const reached = objective === "assured" ? -threshold.major : threshold.major === 0 ? -threshold.minor : 0;
+    const reached = assuredToBeat(objective, threshold);
     return {
       level: Math.max(0, (reached - 1) * 1e-9),
       centring: objective === "centred" && threshold.major < 99 ? (threshold.major + 1) / 100 : 1,

@@ -19,7 +19,7 @@ import {
   type SearchLine,
 } from "./conditions";
 import { emptyLine, Lines, type Triple } from "./lines";
-import { type Best, bucketOf, nanovolts, PartBest, rankOf } from "./order";
+import { assuredToBeat, type Best, bucketOf, nanovolts, PartBest, rankOf } from "./order";
 import { greatestAssuredSwing } from "./part-bound";
 import { type PartSpread, partSpread } from "./part-spread";
 import { Prices } from "./prices";
@@ -97,6 +97,8 @@ export class LineSearch {
   #tie: number | null = null;
   /** No line of the part has more assured swing than this, V. */
   #greatestSwing = 0;
+  /** Whether the part can't come before the bar, so that only whether it fits is of interest. */
+  #isOut = false;
   /** Whether only what is dead centre and assured is looked for as long as nothing is found. */
   #floor = false;
   /** Where the last slice of the present line ended: widened slices may touch, and no ratio is to be met twice. */
@@ -170,7 +172,10 @@ export class LineSearch {
     this.#greatestSwing = greatestAssuredSwing(this.#problem, this.#spread);
     // Where there is nothing to beat yet, a part is first looked through for something dead centre and assured, as its
     // best mostly is.
-    this.#floor = best instanceof PartBest && best.isOpen && this.#problem.objective !== "cost";
+    const { objective } = this.#problem;
+    const bar = best instanceof PartBest ? best.bar : null;
+    this.#floor = best instanceof PartBest && bar === null && objective !== "cost";
+    this.#isOut = bar !== null && assuredToBeat(objective, bar) * 1e-9 > this.#greatestSwing + LEAST_LEVEL;
     if (this.#floor) this.#searchAll(best);
     if (!this.#floor || best.threshold === null) {
       this.#floor = false;
@@ -183,13 +188,17 @@ export class LineSearch {
     const [a, b, c] = this.#values;
     this.#hinted = this.#hint;
     if (this.#hinted) this.#searchLine(...this.#hinted, best);
-    if (this.#lookAt(best).level > this.#greatestSwing) return;
     const last = a.length - 1;
     const over = 1 + SLACK;
     // Where a resistor isn't there, its ratio is 0 and the range has to hold that.
     const bHigh = b[0] > 0 ? (b[b.length - 1] / a[0]) * over : 1;
     const cHigh = c[0] > 0 ? (c[c.length - 1] / a[0]) * over : 1;
     this.#searchBox(0, last, b[0] / a[last], bHigh, c[0] / a[last], cHigh, best);
+  }
+
+  /** Whether all there is to know of the part is known: that it fits, where it can't come before the bar. */
+  #isDone(best: Best): boolean {
+    return this.#isOut && best.threshold !== null;
   }
 
   #fail(condition: Condition): void {
@@ -210,14 +219,14 @@ export class LineSearch {
       demand.level = Math.max(demand.level, LEAST_LEVEL);
     }
     if (!threshold) return demand;
-    const { major, minor, supply } = threshold;
+    const { major, supply } = threshold;
     if (objective === "cost") {
       if (this.#prices.least > major) demand.supply = 0;
       else if (this.#prices.least === major) demand.supply = supply;
       return demand;
     }
     if (objective === "centred" && major < 99) demand.centring = (major + 1) / 100;
-    const reached = objective === "assured" ? -major : major === 0 ? -minor : -1;
+    const reached = assuredToBeat(objective, threshold);
     if (reached > 0) demand.level = (reached - 1) * 1e-9;
     // Where nothing is assured, the smaller supply current comes first.
     if (reached === 0) this.#tie = supply;
@@ -261,7 +270,7 @@ export class LineSearch {
     best: Best,
   ): void {
     this.#stopped ||= this.#shouldStop();
-    if (this.#stopped) return;
+    if (this.#stopped || this.#isDone(best)) return;
     const [a, b, c] = this.#values;
     const demand = this.#lookAt(best);
     let [b0, b1, c0, c1] = [bLow, bHigh, cLow, cHigh];
@@ -462,7 +471,7 @@ export class LineSearch {
    * @param likeliest where to begin
    */
   #visit(line: SearchLine, from: number, to: number, likeliest: number, best: Best): void {
-    if (from >= to) return;
+    if (from >= to || this.#isDone(best)) return;
     const [low, high] = this.#narrow(line, from, to, best);
     if (low >= high) return;
     const at = likeliest >= low && likeliest < high ? likeliest : (low + high) >> 1;
@@ -528,7 +537,7 @@ export class LineSearch {
     }
     if (threshold && objective === "assured") least = (-threshold.major - 1) * 1e-9;
     const point = { x, id, vds, symmetric: Math.min(towardCutoff, towardOhmic) };
-    const assured = this.#assured.swing(this.#spread, this.#triple, ratio, least);
+    const assured = this.#isOut ? 0 : this.#assured.swing(this.#spread, this.#triple, ratio, least);
     if (assured < least) return;
     // The bounds at this one current are cheaper than the wave, and mostly decide.
     const failed =

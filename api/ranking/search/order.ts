@@ -63,6 +63,12 @@ export function compareCandidates(a: Candidate, b: Candidate): number {
   );
 }
 
+/** The assured swing that a candidate has to have to come before another, in nanovolts; below zero where that is open. */
+export function assuredToBeat(objective: Objective, { major, minor }: Candidate): number {
+  if (objective === "assured") return -major;
+  return objective === "centred" && major === 0 ? -minor : -1;
+}
+
 /** Where a search puts what it finds. */
 export type Best = {
   /** The candidate that a new one must not come after; null while anything gets in. */
@@ -76,22 +82,18 @@ export type Best = {
  * all; from then on only what comes before the bar matters, because the part's place after it is of no interest.
  */
 export class PartBest implements Best {
-  readonly #bar: Candidate | null;
+  /** The last place of the answer so far; null where the part's very best is wanted. */
+  readonly bar: Candidate | null;
   found: Candidate | null = null;
-
-  /** Whether the part's very best is wanted, and not only what comes before a bar. */
-  get isOpen(): boolean {
-    return this.#bar === null;
-  }
 
   /** @param bar the last place of the answer so far, when all its places are taken */
   constructor(bar: Candidate | null) {
-    this.#bar = bar;
+    this.bar = bar;
   }
 
   get threshold(): Candidate | null {
-    if (!this.found || !this.#bar) return this.found;
-    return compareCandidates(this.#bar, this.found) < 0 ? this.#bar : this.found;
+    if (!this.found || !this.bar) return this.found;
+    return compareCandidates(this.bar, this.found) < 0 ? this.bar : this.found;
   }
 
   add(candidate: Candidate): boolean {

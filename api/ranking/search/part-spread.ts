@@ -24,7 +24,10 @@ export type PartSpread = {
 /** Reads a part's spread from the catalog, for the brief's ambient range. */
 export function partSpread(catalog: Catalog, row: number, { ambientMin, ambientMax }: Problem): PartSpread {
   const tcVt = catalog.tcVt[row];
-  const atEnds = (at: (celsius: number) => number): [number, number] => [at(ambientMin), at(ambientMax)];
+  const atEnds = (at: (celsius: number) => number): [number, number] => {
+    const cold = at(ambientMin);
+    return [cold, ambientMin === ambientMax ? cold : at(ambientMax)];
+  };
   return {
     lambda: catalog.lambda[row],
     tcVt,
