@@ -14,11 +14,10 @@ export const FREQUENCY: MethodSection = {
         "R_i = R_{sig} + R_{in},  R_o = R_{out} + R_L,  R_x = R_S || {r_o + r_L}/{1 + g_m r_o}",
       ],
       words:
-        "The bypass capacitor works against the least resistance, so it is the largest: it sets the corner, and the coupling capacitors stay a decade below. Without a bypass capacitor, two coupling capacitors share the corner: each is set to `f (√{2} − 1)^{1/2}`, or 0.64 `f`. Round up to a preferred value.",
-      source:
-        "The product of the three responses is solved for the corner itself; the share is common practice.",
+        "The bypass capacitor works against the least resistance, so it is the largest: it sets the corner, and the coupling capacitors stay a decade below. Without a bypass capacitor, two coupling capacitors share the corner: each is set to `f (√{2} − 1)^{1/2}`, or 0.64 `f`. The product of the three responses gives these proportions; the nodes of the whole circuit, source impedance and feedback included, are then solved with all capacitors in place, and all are scaled by one factor until the corner is met. Round up to a preferred value.",
+      source: "Nodal analysis of the small-signal circuit; the shares are common practice.",
       limits:
-        "Exact values without tolerance. Ceramic capacitors lose capacitance with voltage, electrolytics have −20 %. The three responses are taken as independent of one another.",
+        "Exact values without tolerance. Ceramic capacitors lose capacitance with voltage, electrolytics have −20 %.",
     },
     {
       id: "high-corner",
