@@ -50,9 +50,13 @@ export function actualInWords({ condition, actual }: Pick<Margin, "condition" | 
   return condition === "distortion" ? formatPercent(actual, 2) : formatQuantity(actual, UNITS[condition]);
 }
 
+/** From here on a share of the limit says less than how many times as much there is. */
+const MANY = 10;
+
 /** A margin with its sign, as a column shows it: a tenth of a per cent counts where there are few of them. */
 export function marginInWords(margin: number): string {
   if (!Number.isFinite(margin)) return margin > 0 ? "no limit" : "past";
+  if (margin >= MANY) return `× ${formatQuantity(margin + 1, "", { digits: 2 })}`;
   const sign = margin > 0 ? "+" : "";
   return `${sign}${shareInWords(margin)}`;
 }

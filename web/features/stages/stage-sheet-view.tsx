@@ -50,11 +50,11 @@ export function StageSheetView(props: StageSheetViewProps) {
   const missed = missedConditions(part, brief, resistors, margins);
   return (
     // On paper the two columns stay, shrunk so that a sheet is one page.
-    <div className="mt-6 grid grid-cols-[minmax(0,1fr)] gap-x-14 gap-y-9 lg:grid-cols-[minmax(0,1fr)_25rem] lg:grid-rows-[auto_1fr] print:grid-cols-[minmax(0,1fr)_22rem] print:grid-rows-[auto_1fr] print:gap-x-8 print:[zoom:0.8]">
+    <div className="mt-6 grid grid-cols-[minmax(0,1fr)] gap-x-14 gap-y-9 lg:grid-cols-[minmax(0,1fr)_25rem] lg:grid-rows-[auto_1fr] print:grid-cols-[minmax(0,1fr)_22rem] print:grid-rows-[auto_1fr] print:gap-x-8 print:gap-y-5 print:[zoom:0.77]">
       <div className="min-w-0">
         <DrivenFigure part={part} brief={brief} resistors={resistors} sheet={sheet} celsius={celsius} />
       </div>
-      <div className="flex min-w-0 flex-col gap-7 lg:row-span-2 print:row-span-2">
+      <div className="flex min-w-0 flex-col gap-7 lg:row-span-2 print:row-span-2 print:gap-4 print:[&_dl>div]:py-1">
         <div>
           {sheet.bias.swing && (
             <BalanceBar
@@ -108,8 +108,8 @@ export function StageSheetView(props: StageSheetViewProps) {
           <StageFigures sheet={sheet} brief={brief} />
         </section>
       </div>
-      <div className="flex min-w-0 flex-col gap-7">
-        <section aria-label="Cautions" className="grid items-start gap-3 xl:grid-cols-2">
+      <div className="flex min-w-0 flex-col gap-7 print:gap-4">
+        <section aria-label="Cautions" className="grid items-start gap-3 xl:grid-cols-2 print:grid-cols-2">
           {cautions.map(({ code, message }) => (
             <CautionBlock key={code}>{message}</CautionBlock>
           ))}

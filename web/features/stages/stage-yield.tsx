@@ -65,9 +65,13 @@ export function StageYield({ stageId, partId, brief, resistors }: StageYieldProp
   );
 }
 
-function intervalInWords({ yield: { low, high } }: StageYieldResponse): string {
-  return `95 % interval ${formatPercent(low)} to ${formatPercent(high)}`;
+function intervalInWords({ yield: { fraction, low, high } }: StageYieldResponse): string {
+  // Near the ends the interval is narrower than a tenth of a per cent.
+  const decimals = Math.min(fraction, 1 - fraction) < NEAR_AN_END ? 2 : 1;
+  return `95 % interval ${formatPercent(low, decimals)} to ${formatPercent(high, decimals)}`;
 }
+
+const NEAR_AN_END = 0.005;
 
 const PARAMETERS: Record<BuildParameter, { name: string; held: string }> = {
   vt: { name: "the threshold", held: "its typical value" },

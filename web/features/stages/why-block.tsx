@@ -44,7 +44,10 @@ export function WhyBlock({ part, brief, resistors, sheet, margins, onChange }: W
       <div className="grid grid-cols-[minmax(0,1fr)] items-start gap-x-10 gap-y-6 xl:grid-cols-[minmax(0,1fr)_minmax(0,1fr)] print:grid-cols-[minmax(0,1fr)_minmax(0,1fr)] print:gap-x-6 print:gap-y-3">
         <Margins margins={margins} brief={brief} />
         {sensitivities.length > 0 && <Sensitivities sensitivities={sensitivities} />}
-        <EveryBoard sheet={sheet} />
+        {/* On paper the verdict's words stand for it: a sheet is one page. */}
+        <div data-no-print="">
+          <EveryBoard sheet={sheet} />
+        </div>
         <BetterValueTable
           better={better}
           present={{ centringError, assured: sheet.assured.swing.symmetric }}
