@@ -36,10 +36,12 @@ const exactVolts = (value: number) => formatQuantity(value, "V", { exact: true }
 
 /** The one list of cautions: each says when it applies, with the stage's own figure. */
 const RULES: Record<CautionCode, Rule> = {
-  "high-rail": ({ brief }) => {
-    const highest = brief.rail.volts * (1 + brief.rail.tolerance);
+  "high-rail": ({ brief, nominal }) => {
+    const { vdd, vss } = nominal.values;
+    const highest = (vdd + vss) * (1 + brief.rail.tolerance);
     if (highest <= TOUCH_SAFE_VOLTS) return null;
-    return `The rail can reach ${volts(highest)}, above the 60 V d.c. that safety standards treat as safe to touch. Follow your local rules; qualified people only.`;
+    const between = vss > 0 ? "Between the rails there can be" : "The rail can reach";
+    return `${between} ${volts(highest)}, above the 60 V d.c. that safety standards treat as safe to touch. Follow your local rules; qualified people only.`;
   },
   "hot-surface": ({ brief, hot }) => {
     if (hot.thermal.junction < HOT_CELSIUS) return null;
@@ -50,9 +52,14 @@ const RULES: Record<CautionCode, Rule> = {
     return `The overdrive is ${volts(bias.overdrive)}. Below about 0.1 V a real device leaves the square law, so these figures are optimistic.`;
   },
   "gate-voltage": ({ part, brief, hot }) => {
-    const highest = hot.bias.vg * (1 + brief.rail.tolerance);
+    const { vss } = hot.values;
+    const highest = (vss > 0 ? vss : hot.bias.vg) * (1 + brief.rail.tolerance);
     if (highest <= part.vgss) return null;
-    return `The gate sits at ${volts(highest)} while the source is still at ground at power-up, above the ${exactVolts(part.vgss)} gate rating. Add a clamp or choose another part.`;
+    const when =
+      vss > 0
+        ? `Until the source has risen at power-up there are ${volts(highest)} between gate and source`
+        : `The gate sits at ${volts(highest)} while the source is still at ground at power-up`;
+    return `${when}, above the ${exactVolts(part.vgss)} gate rating. Add a clamp or choose another part.`;
   },
   "drain-current": ({ part, hot }) => {
     const peak = hot.bias.transition?.id ?? hot.bias.id;
@@ -67,11 +74,13 @@ const RULES: Record<CautionCode, Rule> = {
     `Electrostatic discharge can damage the gate. Handle on a grounded mat; ${formatQuantity(hot.bias.inputResistance, "Ω")} at the gate leaks little charge away.`,
   "capacitor-voltage": ({ brief, hot }) => {
     const high = 1 + brief.rail.tolerance;
-    const sits = [`input capacitor ${volts(hot.nodes.gate * high)}`];
+    // The gate may sit at ground itself, and then the input's own level is all there is.
+    const sits = hot.nodes.gate === 0 ? [] : [`input capacitor ${volts(hot.nodes.gate * high)}`];
     if (brief.load.ohms !== null)
       sits.push(`output capacitor ${volts(brief.rail.volts * high)} at switch-on`);
     if (hot.values.sourceBypassed && hot.values.rs > 0)
-      sits.push(`bypass capacitor ${volts(hot.nodes.source * high)}`);
+      sits.push(`bypass capacitor ${volts(Math.abs(hot.nodes.source) * high)}`);
+    if (sits.length === 0) sits.push("input capacitor whatever its signal source sits at");
     return `Capacitors must stand the voltage across them: ${sits.join(", ")}. Mind the polarity of electrolytics.`;
   },
   lifecycle: ({ part }) => {

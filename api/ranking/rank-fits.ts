@@ -1,6 +1,6 @@
 import { circuitOf } from "#shared/bias/circuits/registry";
 import { assuredSwing, boxOf } from "#shared/bias/spread";
-import { figureSignal, figureStage } from "#shared/bias/stage-sheet";
+import { figureSignal, figureStage, negativeRail } from "#shared/bias/stage-sheet";
 import { cautionsFor } from "#shared/cautions";
 import type { Brief } from "#shared/schemas/brief";
 import type { Fit, FitsRequest, FitsResponse } from "#shared/schemas/fits";
@@ -58,12 +58,19 @@ export async function rankFits(
     considered: ranking.considered,
     partsThatFit: ranking.partsThatFit,
     complete: ranking.complete,
-    // A part that was not searched may still hold a fit at dead centre.
-    ...(ranking.complete ? {} : { remainingBound: 0 }),
+    ...(ranking.complete ? {} : { remainingBound: remainingBound(request) }),
     passedOver: describePassedOver(ranking.passedOver, request.brief),
     relax,
     elapsedMs: performance.now() - started,
   };
+}
+
+/**
+ * The best that a part which was not searched may still hold: dead centre; half of what falls across the stage, as no
+ * a.c. line is longer than that each way; or nothing to pay.
+ */
+function remainingBound({ brief, objective }: FitsRequest): number {
+  return objective === "assured" ? (brief.rail.volts + negativeRail(brief)) / 2 : 0;
 }
 
 function presentFit(part: Part, brief: Brief, supply: ResistorSupply, candidate: Candidate): Fit {

@@ -90,7 +90,10 @@ export const fitsResponseSchema = z.object({
   /** Parts that have at least one fit. */
   partsThatFit: z.int(),
   complete: z.boolean(),
-  /** With `complete: false`: the least centring error that an unsearched combination could still have. */
+  /**
+   * With `complete: false`, the best that an unsearched combination could still have: the least centring error, the
+   * greatest assured swing in volts, or the least cost in cents.
+   */
   remainingBound: z.number().optional(),
   passedOver: z.array(z.object({ reason: z.enum(PASSED_OVER_REASONS), parts: z.int(), message: z.string() })),
   relax: relaxationSchema.nullable(),

@@ -18,6 +18,7 @@ import {
   readDevice,
   type SearchLine,
 } from "./conditions";
+import { Contraction } from "./contraction";
 import { emptyLine, Lines, type Triple } from "./lines";
 import { assuredToBeat, type Best, bucketOf, nanovolts, PartBest, rankOf } from "./order";
 import { greatestAssuredSwing } from "./part-bound";
@@ -79,6 +80,7 @@ export class LineSearch {
   /** The least current that any divider draws, A. */
   readonly #leastDivider: number;
   readonly #boxes: Boxes;
+  readonly #contraction: Contraction;
   readonly #assured: AssuredSwing;
   readonly #prices: Prices;
   readonly #pointwise: boolean;
@@ -142,12 +144,14 @@ export class LineSearch {
     const ends = spreadEnds(problem, name, circuit);
     const [greatest] = values.r1.slice(-1);
     this.#leastDivider = divides ? vdd / (2 * greatest) : 0;
-    this.#boxes = new Boxes(problem, this.#lines, this.#values[0], ends, {
+    const gateFigures = {
       leastDivider: this.#leastDivider,
       leastInput: this.#leastInput,
       table: this.#table,
       ratioSpread,
-    });
+    };
+    this.#boxes = new Boxes(problem, this.#lines, this.#values[0], ends, gateFigures);
+    this.#contraction = new Contraction(problem, this.#lines, this.#values[0], ends, gateFigures);
     this.#assured = new AssuredSwing(this.#lines, ends, ratioSpread);
     this.#prices = new Prices(problem, circuit);
     this.#pointwise = hasPointConditions(problem);
@@ -276,11 +280,11 @@ export class LineSearch {
     let [b0, b1, c0, c1] = [bLow, bHigh, cLow, cHigh];
     const contracts = demand.level > 0 && this.#tie === null;
     if (contracts) {
-      const { range } = this.#boxes;
+      const { range } = this.#contraction;
       const { gateB, gateC } = this.#lines;
       range[0] = gateB * b0 + gateC * c0;
       range[1] = gateB * b1 + gateC * c1;
-      if (!this.#boxes.contract(this.#device, this.#spread, from, to, b0, b1, demand)) return;
+      if (!this.#contraction.contract(this.#device, this.#spread, from, to, b0, b1, demand)) return;
       if (gateB === 1) {
         b0 = Math.max(b0, range[0] - gateC * c1);
         b1 = Math.min(b1, range[1] - gateC * c0);

@@ -45,3 +45,10 @@ export function spreadEnds(problem: Problem, name: CircuitName, { axes }: LineCi
   };
   return { cutoff: side(worst.cutoff), ohmic: side(worst.ohmic) };
 }
+
+/** Of the corners toward the ohmic region those that mostly bind, at both ends of the rail: RD high, RS low. */
+export function likeliest(ends: readonly LineEnd[]): LineEnd[] {
+  const lean = ({ scale }: LineEnd) => scale[0] - scale[1] - scale[2];
+  const most = Math.max(...ends.map(lean));
+  return ends.filter((end) => lean(end) === most);
+}
