@@ -194,7 +194,7 @@ function directFigures(
 /** The gate's own resistance to ground, ohms. */
 function gateResistance({ circuit, r1, r2, rg }: PlainStage): number {
   if (circuit === "negative-rail") return rg;
-  if (circuit === "drain-feedback") return r2 === 0 ? 1e18 : r2;
+  if (circuit === "drain-feedback") return r2 === 0 ? Number.POSITIVE_INFINITY : r2;
   return (r1 * r2) / (r1 + r2);
 }
 
@@ -207,7 +207,7 @@ function smallSignal(brief: PlainBrief, part: PlainPart, s: PlainStage, q: Plain
     drain: follows ? 0 : beside(s.rd),
     source: follows ? beside(s.rs) : degeneration(s),
     gate: gateResistance(s),
-    feedback: s.circuit === "drain-feedback" ? s.rg : 1e18,
+    feedback: s.circuit === "drain-feedback" ? s.rg : Number.POSITIVE_INFINITY,
     rsig: brief.sourceImpedance,
     output: follows ? "source" : "drain",
   };
