@@ -238,7 +238,9 @@ function tryCombination(
   const small = smallSignal(brief, part, stage, q);
   const gain = response({ ...part, ciss: 0, crss: 0, coss: 0 }, { ...small, rsig: 0 }, 0);
   if (gain < (brief.gainMin ?? 0) || gain > (brief.gainMax ?? none)) return null;
-  const rin = 1 / (1 / small.gate + (1 + gain) / small.feedback);
+  // Where nothing is fed back the gate's own resistance is the input's, to the last bit.
+  const fedBack = 1 / (1 / small.gate + (1 + gain) / small.feedback);
+  const rin = small.feedback === none ? small.gate : fedBack;
   if (rin < (brief.inputResistanceMin ?? 0)) return null;
   if (brief.distortionMax !== undefined && brief.distortionPeak) {
     const hd2 = secondHarmonic(part, stage, q, brief.distortionPeak / gain);
