@@ -21,7 +21,8 @@ const degenerationOf = ({ sourceBypassed, rs }: StageValues) => (sourceBypassed 
  * RS: it falls with I, and N is √I - √(I + s) over √K plus a straight line (bypassed), or with I/(I + s) times the
  * rest of the rail (not bypassed), both concave;
  * RD: N rises with I, and I >= i holds where √((i + s)/K) + i RT + S stays below VDD, convex in RD as s = S (1/RD + 1/RL).
- * With λ > 0 no counter-example is known in random boxes (`tests/reference/spread.test.ts` looks for one).
+ * With λ > 0 this is tested, not proved (`tests/reference/spread.test.ts`). Of 4,000 random boxes with λ up to 0.2/V one,
+ * at λ = 0.12/V on 57 V ± 30 %, had less room toward the ohmic region at a K inside its range, by 3.4 parts in a million.
  */
 export const FOUR_RESISTOR: Circuit = {
   title: "Four-resistor common source",
