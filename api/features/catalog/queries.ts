@@ -1,18 +1,20 @@
-import { asc, inArray, sql } from "drizzle-orm";
+import { inArray, sql } from "drizzle-orm";
 import type { Queryable } from "../../db/client";
 import { catalogVersions } from "../../db/schema/catalog";
 
 /** Where the catalog that all teams share counts its changes. */
 const SHARED = 0;
 
-/** The versions of the shared catalog and of a team's own parts, as one word. */
-export async function selectVersion(db: Queryable, teamId: number): Promise<string> {
+/** How often the shared catalog and a team's own part of it have changed. */
+export type CatalogVersion = { shared: number; own: number };
+
+export async function selectVersion(db: Queryable, teamId: number): Promise<CatalogVersion> {
   const rows = await db
     .select()
     .from(catalogVersions)
-    .where(inArray(catalogVersions.teamId, [SHARED, teamId]))
-    .orderBy(asc(catalogVersions.teamId));
-  return rows.map((row) => `${row.teamId}:${row.version}`).join(" ");
+    .where(inArray(catalogVersions.teamId, [SHARED, teamId]));
+  const versionOf = (id: number) => rows.find((row) => row.teamId === id)?.version ?? 0;
+  return { shared: versionOf(SHARED), own: versionOf(teamId) };
 }
 
 /** Counts a change; a team's own, or the shared catalog's where there is no team. */

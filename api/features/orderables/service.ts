@@ -14,12 +14,12 @@ const TOLERANCE_SLACK = 1e-9;
 export function resistorSupply(context: SignedInContext, brief: Brief): Promise<ResistorSupply> {
   const { tolerance, stockedOnly } = brief.resistors;
   const kind = `resistors at ${tolerance}, ${stockedOnly ? "in stock" : "all"}, for ${brief.buildQuantity}`;
-  return readKept(context, kind, () => readSupply(context, brief));
+  return readKept(context, "shared", kind, () => readSupply(context, brief));
 }
 
 async function readSupply(context: SignedInContext, brief: Brief): Promise<ResistorSupply> {
   const { tolerance, stockedOnly } = brief.resistors;
-  const all = await readKept(context, "resistors", () => selectResistors(context.db));
+  const all = await readKept(context, "shared", "resistors", () => selectResistors(context.db));
   const within = all.filter((row) => row.tolerance <= tolerance + TOLERANCE_SLACK);
   const inStock = within.filter(({ stock }) => stock > 0);
   return {

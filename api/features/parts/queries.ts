@@ -57,3 +57,13 @@ export async function selectPart(db: Queryable, teamId: number, id: number): Pro
 export function selectAllParts(db: Queryable, teamId: number): Promise<Part[]> {
   return db.select(columns).from(parts).where(visibleTo(teamId));
 }
+
+/** Every part of the catalog that all teams share. */
+export function selectSharedParts(db: Queryable): Promise<Part[]> {
+  return db.select(columns).from(parts).where(isNull(parts.teamId));
+}
+
+/** Every part that is a team's own. */
+export function selectOwnParts(db: Queryable, teamId: number): Promise<Part[]> {
+  return db.select(columns).from(parts).where(eq(parts.teamId, teamId));
+}

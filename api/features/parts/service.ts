@@ -2,7 +2,7 @@ import type { ListPartsQuery, Part, PartPage } from "#shared/schemas/part";
 import type { SignedInContext } from "../../http/context";
 import { invalid, notFound } from "../../http/problem";
 import { readKept } from "../catalog/service";
-import { type PartCursor, selectAllParts, selectPart, selectParts } from "./queries";
+import { type PartCursor, selectOwnParts, selectPart, selectParts, selectSharedParts } from "./queries";
 
 /** One page of the catalog in part-number order. */
 export async function listParts({ db, actor }: SignedInContext, query: ListPartsQuery): Promise<PartPage> {
@@ -20,8 +20,13 @@ export async function getPart({ db, actor }: SignedInContext, id: number): Promi
 }
 
 /** Every part the team may use. */
-export function usableParts(context: SignedInContext): Promise<Part[]> {
-  return readKept(context, "parts", () => selectAllParts(context.db, context.actor.team.id));
+export async function usableParts(context: SignedInContext): Promise<Part[]> {
+  const { db, actor } = context;
+  const found = await Promise.all([
+    readKept(context, "shared", "parts", () => selectSharedParts(db)),
+    readKept(context, "own", "parts", () => selectOwnParts(db, actor.team.id)),
+  ]);
+  return found.flat();
 }
 
 /** A cursor says where the last page ended; opaque to callers. */
